@@ -1,5 +1,6 @@
 import type { Json, Role } from '@/lib/schema/common';
 import type { EntityName, EntityRecord } from '@/lib/schema/entities';
+import type { ChangeContext, RecordChange } from '@/lib/schema/record-change';
 import type { WorkPack } from '@/lib/schema/wire';
 
 /** Who signed in on this device; kept in the device's own store so that the field never asks a session. */
@@ -10,16 +11,6 @@ export type Identity = {
   readonly signedInAt: string;
   readonly projects: readonly { readonly id: string; readonly name: string; readonly role: Role | 'admin' }[];
 };
-
-/** One change to one record, to be saved as one operation. `create` takes all fields, group '*'. */
-export type RecordChange = {
-  readonly [E in EntityName]:
-    | { readonly entity: E; readonly recordId: string; readonly kind: 'create'; readonly values: EntityRecord[E] }
-    | { readonly entity: E; readonly recordId: string; readonly kind: 'set'; readonly group: string; readonly values: Partial<EntityRecord[E]> }
-    | { readonly entity: E; readonly recordId: string; readonly kind: 'delete' | 'restore' };
-}[EntityName];
-
-export type CommitContext = { readonly projectId: string; readonly authorId: string; readonly reason?: string };
 
 /** What is being typed and has not been saved as a value; survives a kill. */
 export type Draft = { readonly id: string; readonly projectId: string; readonly updatedAt: string; readonly body: Json };
@@ -46,7 +37,7 @@ export type QueueState = {
 export interface FieldStore {
   readonly deviceId: string;
   /** Saves changes, their operations, the chain's head and (optionally) a draft in one transaction. */
-  commit(changes: readonly RecordChange[], context: CommitContext, draft?: { put?: Draft; remove?: string }): Promise<{ readonly firstSeq: number; readonly lastSeq: number }>;
+  commit(changes: readonly RecordChange[], context: ChangeContext, draft?: { put?: Draft; remove?: string }): Promise<{ readonly firstSeq: number; readonly lastSeq: number }>;
   list<E extends EntityName>(projectId: string, entity: E): Promise<EntityRecord[E][]>;
   get<E extends EntityName>(entity: E, id: string): Promise<EntityRecord[E] | null>;
   /** Called after each commit or received page, with the project touched. Returns the way to stop. */
