@@ -1,5 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { QueryTypes } from 'sequelize';
+import type { Model, ModelStatic } from 'sequelize';
 import { v7 } from 'uuid';
 import { entityNames, entitySchemas } from '@/lib/schema/entities';
 import type { EntityName, EntityRecord } from '@/lib/schema/entities';
@@ -77,9 +78,9 @@ describe('schemas and models', () => {
 
   it('every column of every model exists in its table, and the other way round', async () => {
     for (const model of Object.values(database.models)) {
-      const table = model.getTableName() as string;
+      const { tableName: table } = model;
       const columns = await database.sequelize.query<{ name: string }>(`SELECT name FROM pragma_table_info('${table}')`, { type: QueryTypes.SELECT });
-      const fields = Object.values(model.getAttributes()).map((attribute) => attribute.field);
+      const fields = Object.values((model as ModelStatic<Model>).getAttributes()).map((attribute) => attribute.field);
       expect(new Set(columns.map(({ name }) => name)), table).toEqual(new Set(fields));
     }
   });

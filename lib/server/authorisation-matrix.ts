@@ -1,0 +1,33 @@
+import type { Action } from './policies';
+
+export type Method = 'GET' | 'HEAD' | 'POST' | 'PUT' | 'PATCH' | 'DELETE' | 'OPTIONS';
+
+/** What a valid call for a project looks like, apart from `[projectId]` in the address and made-up ids for other `[…]` parts. */
+export type SampleCall = { readonly query?: Readonly<Record<string, string>>; readonly body?: unknown; readonly form?: FormData };
+
+export type AccessRow =
+  /** Anyone, or anyone signed in. `why` says what guards what the answer holds. */
+  | { readonly access: 'public' | 'signed-in'; readonly why: string }
+  /** The sign-in library's own route, with its own token against forged requests. */
+  | { readonly access: 'sign-in' }
+  /** Members whose role allows `action`; others are told 404. */
+  | { readonly access: Action; readonly sample?: (projectId: string) => SampleCall };
+
+/**
+ * Who may call what: file below app/api → method → row. Tests list the route files on disk and fail when a file or an
+ * exported method has no row, when a row has no method, and when a row differs from what the handler itself declares.
+ *
+ * To add a route: write app/api/…/route.ts with `export const GET = route({ access: … }, …)`, then a row here under its
+ * path. For a row with a project the tests call the handler as a signed-in person of another project and want 404: where
+ * the call needs a query or a body to be valid (or names the project there), give `sample`, which gets the project's id.
+ *
+ * @example
+ * 'v1/projects/[projectId]/import/route.ts': {
+ *   POST: { access: 'data.import', sample: () => ({ body: { fileName: 'a.csv', dbhUnit: 'cm', lengthUnit: 'm' } }) },
+ * },
+ */
+export const authorisationMatrix: Readonly<Record<string, Partial<Readonly<Record<Method, AccessRow>>>>> = {
+  'auth/[...nextauth]/route.ts': { GET: { access: 'sign-in' }, POST: { access: 'sign-in' } },
+  'health/route.ts': { GET: { access: 'public', why: 'holds only whether the database answers, its schema number and its epoch' } },
+  'v1/me/route.ts': { GET: { access: 'signed-in', why: 'holds the caller, and the projects of the caller' } },
+};
