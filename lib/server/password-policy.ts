@@ -29,7 +29,7 @@ export function passwordFaults(password: string, email: string): string[] {
   if ([...password].length < FEWEST_PASSWORD_CHARACTERS) faults.push(`The password needs at least ${FEWEST_PASSWORD_CHARACTERS} characters.`);
   if (!fitsBcrypt(password)) faults.push(`The password may have at most ${MOST_PASSWORD_BYTES} bytes; letters with accents count two or more.`);
   const plain = password.toLowerCase().replace(/[^\p{L}\p{N}]/gu, '');
-  const name = email.toLowerCase().split('@')[0] ?? '';
+  const name = (email.toLowerCase().split('@')[0] ?? '').replace(/[^\p{L}\p{N}]/gu, '');
   if (COMMON.has(plain) || isRepeated(password.toLowerCase()) || (plain.length > 0 && ROWS.some((row) => row.includes(plain)))) {
     faults.push('The password is one of those that are tried first; choose another.');
   } else if (name.length >= 4 && plain.replaceAll(name, '').length < 6) {

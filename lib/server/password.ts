@@ -11,39 +11,46 @@ const MOST_WORKERS = 2;
 const MOST_WAITING = 100;
 
 type Job = { readonly message: object; resolve(result: string | boolean): void; reject(error: Error): void };
-type Pool = { idle: Worker[]; running: number; waiting: Job[] };
+type Slot = { readonly worker: Worker; job: Job | null };
+type Pool = { slots: Slot[]; waiting: Job[] };
 
 // One pool in the process, however often the bundler copies this module.
 const shared = globalThis as typeof globalThis & { lammasBcryptPool?: Pool };
 
 function pool(): Pool {
-  return (shared.lammasBcryptPool ??= { idle: [], running: 0, waiting: [] });
+  return (shared.lammasBcryptPool ??= { slots: [], waiting: [] });
 }
 
-function newWorker(): Worker {
+function addSlot(): Slot {
   const file = path.join(/* turbopackIgnore: true */ process.cwd(), 'lib', 'server', 'bcrypt-worker.mjs');
-  return new Worker(/* turbopackIgnore: true */ file, { execArgv: [] });
+  const slot: Slot = { worker: new Worker(/* turbopackIgnore: true */ file, { execArgv: [] }), job: null };
+  const lost = (error: Error) => {
+    pool().slots = pool().slots.filter((other) => other !== slot);
+    slot.job?.reject(error);
+    slot.job = null;
+    startNext();
+  };
+  slot.worker.on('message', (result: string | boolean) => {
+    slot.job?.resolve(result);
+    slot.job = null;
+    slot.worker.unref();
+    startNext();
+  });
+  slot.worker.on('error', lost);
+  slot.worker.on('exit', (code) => lost(new Error(`The password worker ended with ${code}.`)));
+  pool().slots.push(slot);
+  return slot;
 }
 
 function startNext(): void {
-  const current = pool();
-  if (current.running >= MOST_WORKERS) return;
-  const job = current.waiting.shift();
-  if (!job) return;
-  current.running += 1;
-  const worker = current.idle.pop() ?? newWorker();
+  const { slots, waiting } = pool();
+  const slot = slots.find(({ job }) => job === null) ?? (slots.length < MOST_WORKERS && waiting.length > 0 ? addSlot() : null);
+  const job = slot && waiting.shift();
+  if (!slot || !job) return;
+  slot.job = job;
   // A working worker keeps a command alive until the answer is there; an idle one lets it end.
-  worker.ref();
-  const finish = (keep: boolean) => {
-    worker.removeAllListeners();
-    current.running -= 1;
-    if (keep) { worker.unref(); current.idle.push(worker); }
-    startNext();
-  };
-  worker.once('message', (result: string | boolean) => { finish(true); job.resolve(result); });
-  worker.once('error', (error) => { finish(false); job.reject(error); });
-  worker.once('exit', (code) => { finish(false); job.reject(new Error(`The password worker ended with ${code}.`)); });
-  worker.postMessage(job.message);
+  slot.worker.ref();
+  slot.worker.postMessage(job.message);
 }
 
 function ask(message: object): Promise<string | boolean> {

@@ -16,11 +16,13 @@ export type RouteInput<P extends z.ZodType, Q extends z.ZodType, B extends z.Zod
   readonly body: z.output<B>;
 };
 
-/** Who may call: anyone, anyone signed in, or those whom the policy lets do `action` in the project named by the input. */
-export type Access<Input> = 'public' | 'signed-in' | { readonly action: Action; readonly project: (input: Input) => string | null };
+/** Those whom the policy lets do `action` in the project that the input names. */
+type ProjectAccess<Input> = { readonly action: Action; readonly project: (input: Input) => string };
+/** Those whom the policy lets do `action` on the server as a whole. */
+type ServerAccess = { readonly action: Action; readonly project: 'server' };
 
-type Caller<A> = A extends 'public' ? SignedIn | null : SignedIn;
-type ProjectOf<A> = A extends { action: Action } ? string : null;
+/** Who may call. */
+export type Access<Input> = 'public' | 'signed-in' | ProjectAccess<Input> | ServerAccess;
 
 export type RouteOptions<A, P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType> = {
   readonly access: A;
@@ -36,6 +38,13 @@ export type RouteOptions<A, P extends z.ZodType, Q extends z.ZodType, B extends 
   readonly verbatim?: boolean;
   /** What the answer must be; parsed, so that nothing else leaves. */
   readonly reply?: z.ZodType;
+};
+
+export type RouteCall<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType, User, ProjectId> = RouteInput<P, Q, B> & {
+  readonly user: User;
+  readonly request: Request;
+  /** The project that the caller was let into; null where access names none. */
+  readonly projectId: ProjectId;
 };
 
 type NextContext = { readonly params: Promise<Record<string, string | string[] | undefined>> };
@@ -105,11 +114,17 @@ function answer(result: unknown, reply: z.ZodType | undefined): Response {
  *   async ({ projectId }) => listTrees(projectId),
  * );
  */
-export function route<
-  const A extends Access<RouteInput<P, Q, B>>, P extends z.ZodType = None, Q extends z.ZodType = None, B extends z.ZodType = z.ZodUndefined,
->(
-  options: RouteOptions<A, P, Q, B> & { readonly access: Access<RouteInput<P, Q, B>> },
-  handler: (call: RouteInput<P, Q, B> & { readonly user: Caller<A>; readonly request: Request; readonly projectId: ProjectOf<A> }) => unknown,
+export function route<P extends z.ZodType = None, Q extends z.ZodType = None, B extends z.ZodType = z.ZodUndefined>(
+  options: RouteOptions<ProjectAccess<RouteInput<P, Q, B>>, P, Q, B>, handler: (call: RouteCall<P, Q, B, SignedIn, string>) => unknown,
+): RouteHandler;
+export function route<P extends z.ZodType = None, Q extends z.ZodType = None, B extends z.ZodType = z.ZodUndefined>(
+  options: RouteOptions<'signed-in' | ServerAccess, P, Q, B>, handler: (call: RouteCall<P, Q, B, SignedIn, null>) => unknown,
+): RouteHandler;
+export function route<P extends z.ZodType = None, Q extends z.ZodType = None, B extends z.ZodType = z.ZodUndefined>(
+  options: RouteOptions<'public', P, Q, B>, handler: (call: RouteCall<P, Q, B, SignedIn | null, null>) => unknown,
+): RouteHandler;
+export function route<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType>(
+  options: RouteOptions<Access<RouteInput<P, Q, B>>, P, Q, B>, handler: (call: RouteCall<P, Q, B, never, never>) => unknown,
 ): RouteHandler {
   const access: Access<RouteInput<P, Q, B>> = options.access;
   const limit = options.maxBodyBytes ?? MIB;
@@ -133,11 +148,11 @@ export function route<
     const input = parsed as RouteInput<P, Q, B>;
     let projectId: string | null = null;
     if (typeof access === 'object' && user) {
-      projectId = access.project(input);
+      projectId = access.project === 'server' ? null : access.project(input);
       await authorise(user, access.action, projectId);
     }
-    const call = { ...input, user: user as Caller<A>, request, projectId: projectId as ProjectOf<A> };
-    return answer(await handler(call), options.reply);
+    // The overloads above say what these are for each kind of access.
+    return answer(await handler({ ...input, user: user as never, request, projectId: projectId as never }), options.reply);
   }
 
   const wrapped = async (request: Request, context: NextContext): Promise<Response> => {
