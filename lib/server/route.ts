@@ -47,7 +47,8 @@ export type RouteCall<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodT
   readonly projectId: ProjectId;
 };
 
-type NextContext = { readonly params: Promise<Record<string, string | string[] | undefined>> };
+/** Next hands over no params to a route whose address has none. */
+type NextContext = { readonly params: Promise<Record<string, string | string[] | undefined> | undefined> };
 export type RouteHandler = ((request: Request, context: NextContext) => Promise<Response>) & {
   /** Read by the test of the authorisation matrix. */
   readonly access: 'public' | 'signed-in' | Action;
@@ -138,7 +139,7 @@ export function route<P extends z.ZodType, Q extends z.ZodType, B extends z.ZodT
     const faults = options.body && !options.verbatim && options.bodyKind !== 'form' ? contentFaults(value) : [];
     if (faults.length > 0) throw new Problem('invalid-fields', { issues: faults });
     const { parsed, issues } = parseAll({
-      params: { schema: options.params ?? none, value: await context.params },
+      params: { schema: options.params ?? none, value: (await context.params) ?? {} },
       query: { schema: options.query ?? none, value: onlyOnce([...new URL(request.url).searchParams], 'query') },
       body: { schema: options.body ?? z.undefined(), value },
     });

@@ -62,5 +62,5 @@ export async function signedInRequest(user: Pick<TestUser, 'id'>, url: string, i
   return new Request(new URL(url, TEST_ORIGIN), { ...init, headers });
 }
 
-/** What Next hands to a handler beside the request. */
-export const routeContext = (params: Readonly<Record<string, string | string[]>> = {}) => ({ params: Promise.resolve({ ...params }) });
+/** What Next hands to a handler beside the request; without dynamic parts in the address there are no params at all. */
+export const routeContext = (params?: Readonly<Record<string, string | string[]>>) => ({ params: Promise.resolve(params && { ...params }) });
