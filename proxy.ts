@@ -1,6 +1,6 @@
 import { NextResponse } from 'next/server';
 import type { NextRequest } from 'next/server';
-import { contentSecurityPolicy, fieldScriptHashes } from '@/lib/server/route-csp';
+import { contentSecurityPolicy, fieldScriptHashes, notFoundScriptHashes } from '@/lib/server/route-csp';
 
 /**
  * Sets the content security policy of pages: hashes for the static shell of the field, a nonce for everything that is
@@ -14,7 +14,7 @@ export async function proxy(request: NextRequest): Promise<NextResponse> {
     return NextResponse.next({ headers: { 'Content-Security-Policy': policy, 'Cache-Control': 'no-cache' } });
   }
   const nonce = Buffer.from(crypto.getRandomValues(new Uint8Array(16))).toString('base64');
-  const policy = contentSecurityPolicy([`'nonce-${nonce}'`]);
+  const policy = contentSecurityPolicy([`'nonce-${nonce}'`, ...(await notFoundScriptHashes()).map((hash) => `'${hash}'`)]);
   const headers = new Headers(request.headers);
   headers.set('content-security-policy', policy);
   headers.set('x-nonce', nonce);

@@ -1,6 +1,6 @@
 import { NextRequest } from 'next/server';
 import { afterEach, describe, expect, it, vi } from 'vitest';
-import { mkdtemp, writeFile } from 'node:fs/promises';
+import { mkdir, mkdtemp, writeFile } from 'node:fs/promises';
 import os from 'node:os';
 import path from 'node:path';
 import { contentSecurityPolicy } from '@/lib/server/route-csp';
@@ -44,6 +44,17 @@ describe('the content security policy', () => {
     expect(scriptSrc(one)).toMatch(/^'self' 'nonce-[A-Za-z0-9+/]{22}=='$/);
     expect(scriptSrc(one)).not.toBe(scriptSrc(two));
     expect(one.get('x-middleware-request-content-security-policy')).toBe(one.get('content-security-policy'));
+  });
+  it('of a rendered page names the scripts of the page for unknown addresses too', async () => {
+    vi.resetModules();
+    vi.stubEnv('NODE_ENV', 'production');
+    const folder = await mkdtemp(path.join(os.tmpdir(), 'lammas-dist-'));
+    await mkdir(path.join(folder, 'server', 'app'), { recursive: true });
+    await writeFile(path.join(folder, 'server', 'app', '_not-found.html'), '<script src="/a.js" async=""></script><script>abc</script>');
+    vi.stubEnv('LAMMAS_DIST', path.relative(process.cwd(), folder));
+    const { proxy } = await import('@/proxy');
+    // SHA-256 of "abc": FIPS 180-4 example, here in base64.
+    expect(scriptSrc((await proxy(new NextRequest('http://localhost:3310/nope'))).headers)).toMatch(/ 'nonce-[^']+' 'sha256-ungWv48Bz\+pBQUDeXa4iI7ADYaOWF3qctBD\/YfIAFa0='$/);
   });
 });
 
