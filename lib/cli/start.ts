@@ -55,19 +55,23 @@ export async function startServer({ dev = false }: { dev?: boolean } = {}): Prom
   const { default: next } = await import('next');
   const server = createServer();
   const app = next({ dev, dir: root, port, httpServer: server });
-  await listen(server, port);
-  await app.prepare();
-  const handle = app.getRequestHandler();
+  let prepared = (): void => undefined;
+  const ready = new Promise<void>((resolve) => { prepared = resolve; });
+  // Requests that come while the pages are being prepared wait; without a listener they would hang for ever.
   server.on('request', (request, response) => {
     const forwarded = request.headers['x-forwarded-for'];
     request.headers[addressHeader()] = clientAddress(request.socket.remoteAddress, Array.isArray(forwarded) ? forwarded.join(',') : forwarded, trustedProxies);
     if (https && !dev) response.setHeader('Strict-Transport-Security', 'max-age=63072000; includeSubDomains');
-    handle(request, response).catch((error: unknown) => {
+    ready.then(() => app.getRequestHandler()(request, response)).catch((error: unknown) => {
       console.error(`[server] ${request.method} ${request.url}`, error);
       if (!response.headersSent) response.writeHead(500);
       response.end();
     });
   });
+
+  await listen(server, port);
+  await app.prepare();
+  prepared();
 
   const close = async () => {
     const closed = new Promise<void>((resolve) => { server.close(() => resolve()); });
