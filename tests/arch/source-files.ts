@@ -17,6 +17,7 @@ function below(folder: string): string[] {
 
 /** Our own files, relative to the root with forward slashes, that match. */
 export function sourceFiles(pattern: RegExp): string[] {
-  const atRoot = readdirSync(root, { withFileTypes: true }).filter((entry) => entry.isFile()).map((entry) => entry.name);
+  // next-env.d.ts is made by the framework and leads into a build.
+  const atRoot = readdirSync(root, { withFileTypes: true }).filter((entry) => entry.isFile() && entry.name !== 'next-env.d.ts').map((entry) => entry.name);
   return [...atRoot, ...OURS.flatMap(below)].filter((name) => pattern.test(name)).sort((a, b) => (a < b ? -1 : 1));
 }
