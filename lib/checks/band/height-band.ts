@@ -4,6 +4,7 @@ import type { CurveForm } from '@/lib/stats/forms/curve-forms';
 import { PlotInterceptModel, predictiveInterval, predictiveTail } from '@/lib/stats/mixed/plot-intercept';
 import type { Predictive } from '@/lib/stats/mixed/plot-intercept';
 import { curvePrior } from './curve-prior';
+import { DiameterRange } from './diameter-range';
 import { WEAK_D_MAX_CM, WEAK_D_MIN_CM, weakPrior } from './weak-prior';
 
 export type BandSource = 'curve' | 'pooled' | 'weak';
@@ -11,6 +12,8 @@ export type BandSource = 'curve' | 'pooled' | 'weak';
 const WORTH: Readonly<Record<'curve' | 'pooled', number>> = { curve: 50, pooled: 10 };
 /** Beyond the known diameters by more than this share there is no band. */
 const REACH = 0.25;
+/** Only a tree that is more likely right than wrong stretches the known diameters. */
+const LEAST_WEIGHT = 0.5;
 
 type Taught = { readonly plotId: string; readonly dCm: number; readonly hM: number; readonly weight: number };
 
@@ -22,7 +25,7 @@ export class HeightBand {
   readonly #breastHeightM: number;
   readonly #taught = new Map<string, Taught>();
   readonly #known: readonly [number, number];
-  #range: readonly [number, number] | null;
+  readonly #diameters = new DiameterRange();
 
   /** The prior in order: the group's own curve, the pooled one, the weak start. */
   constructor(options: { readonly own?: HeightCurve | undefined; readonly pooled?: HeightCurve | undefined; readonly form: CurveForm; readonly breastHeightM: number; readonly tauSquared: number }) {
@@ -34,7 +37,6 @@ export class HeightBand {
     const prior = curve && this.source !== 'weak' ? curvePrior(curve, WORTH[this.source]) : weakPrior(form, options.breastHeightM, options.tauSquared);
     this.#model = new PlotInterceptModel(prior, this.#x(curve ? Math.exp(curve.logDMean) : 25));
     this.#known = curve ? [curve.dMinCm, curve.dMaxCm] : [WEAK_D_MIN_CM, WEAK_D_MAX_CM];
-    this.#range = this.#known;
   }
 
   /** O(1): the tree teaches with this weight (0 < weight ≤ 1), or differently than before. */
@@ -43,7 +45,7 @@ export class HeightBand {
     if (!(tree.weight > 0) || !(tree.hM > this.#breastHeightM) || !(tree.dCm > 0)) return;
     this.#taught.set(id, tree);
     this.#model.set(id, { plot: tree.plotId, x: this.#x(tree.dCm), y: Math.log(tree.hM - this.#breastHeightM), weight: tree.weight });
-    if (this.#range) this.#range = [Math.min(this.#range[0], tree.dCm), Math.max(this.#range[1], tree.dCm)];
+    if (tree.weight > LEAST_WEIGHT) this.#diameters.add(tree.dCm);
   }
 
   forget(id: string): void {
@@ -51,7 +53,7 @@ export class HeightBand {
     if (!tree) return;
     this.#taught.delete(id);
     this.#model.remove(id);
-    if (this.#range && (tree.dCm <= this.#range[0] || tree.dCm >= this.#range[1])) this.#range = null;
+    if (tree.weight > LEAST_WEIGHT) this.#diameters.remove(tree.dCm);
   }
 
   /** Runs `work` as if the tree had never been taught. */
@@ -68,11 +70,8 @@ export class HeightBand {
 
   /** How far d lies outside the diameters of prior and data, as a share; 0 inside. */
   outside(dCm: number): number {
-    if (!this.#range) {
-      const taught = [...this.#taught.values()].map((tree) => tree.dCm);
-      this.#range = [Math.min(this.#known[0], ...taught), Math.max(this.#known[1], ...taught)];
-    }
-    return Math.max(0, this.#range[0] / dCm - 1, dCm / this.#range[1] - 1);
+    const [least, most] = this.#diameters.around(this.#known);
+    return Math.max(0, least / dCm - 1, dCm / most - 1);
   }
 
   /**
