@@ -5,5 +5,8 @@ import { heightNotAboveBreastHeightRule } from './height-not-above-breast-height
 import type { Rule } from './rule';
 import { slendernessRule } from './slenderness';
 
-/** All rules, the most telling first: what cannot be comes before what is unlikely. */
-export const rules: readonly Rule[] = [hardLimitsRule, heightNotAboveBreastHeightRule, heightBandRule, slendernessRule, dbhRangeRule];
+/**
+ * All rules, the most telling first: what cannot be comes before what is unlikely. Without a band a far diameter is the
+ * question and not the height, which is only out of proportion to it.
+ */
+export const rules: readonly Rule[] = [hardLimitsRule, heightNotAboveBreastHeightRule, heightBandRule, dbhRangeRule, slendernessRule];
