@@ -39,7 +39,7 @@ const packagesOf: Partial<Readonly<Record<Part, RegExp>>> = {
   stats: /^(simple-statistics|@stdlib\/.+)$/,
   shared: /^(?!node:)(?!next|react|sequelize|dexie|sqlite3)/,
   trees: /^(simple-statistics|@stdlib\/.+)$/,
-  position: /^proj4$/,
+  position: /^(proj4|geographiclib-geodesic)$/,
   schema: /^(zod|uuid)$/,
   checks: /^(simple-statistics|@stdlib\/.+)$/,
   sync: /^(@noble\/hashes|canonicalize|uuid|zod)$/,
