@@ -36,11 +36,11 @@ export function simpleLinear(x: readonly number[], y: readonly number[]): Simple
   const n = x.length;
   if (y.length !== n) return { kind: 'refused', reason: 'unequal-lengths' };
   if (n < 3) return { kind: 'refused', reason: 'too-few' };
-  if (![...x, ...y].every(Number.isFinite)) return { kind: 'refused', reason: 'not-finite' };
+  if (!x.every(Number.isFinite) || !y.every(Number.isFinite)) return { kind: 'refused', reason: 'not-finite' };
   const meanX = compensatedSum(x) / n;
   const meanY = compensatedSum(y) / n;
   const sxx = compensatedSum(x.map((v) => (v - meanX) ** 2));
-  const scale = Math.max(...x.map((v) => Math.abs(v)));
+  const scale = x.reduce((most, v) => Math.max(most, Math.abs(v)), 0);
   if (!(sxx > n * (scale * 1e-13) ** 2)) return { kind: 'refused', reason: 'all-x-equal' };
   const slope = compensatedSum(x.map((v, i) => (v - meanX) * (y[i]! - meanY))) / sxx;
   const intercept = meanY - slope * meanX;
