@@ -1,3 +1,5 @@
+import { decimalsOf } from './decimals-of';
+
 export type ParsedDigits =
   | { readonly kind: 'value'; readonly value: number; readonly digits: string; readonly decimals: number }
   | { readonly kind: 'empty' }
@@ -20,6 +22,5 @@ export function parseDigits(text: string): ParsedDigits {
   const signs = digits.replace(/[0-9]/g, '').length;
   if (signs > 1) return { kind: 'bad', reason: 'two-signs' };
   if (digits === '.' || digits === ',' || /[.,]$/.test(digits)) return { kind: 'unfinished' };
-  const [, after = ''] = digits.split(/[.,]/);
-  return { kind: 'value', value: Number(digits.replace(',', '.')), digits, decimals: after.length };
+  return { kind: 'value', value: Number(digits.replace(',', '.')), digits, decimals: decimalsOf(digits) };
 }

@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { decimalsOf } from '@/lib/trees/decimals-of';
 import { formatValue } from '@/lib/trees/format-value';
 import { parseDigits } from '@/lib/trees/parse-digits';
 import { M2_PER_ACRE, fromCanonicalCm, fromCanonicalM, toCanonicalCm, toCanonicalM } from '@/lib/trees/units';
@@ -28,6 +29,12 @@ describe('digits as typed', () => {
       const [a, b] = [parseDigits(`${whole}.${part}`), parseDigits(`${whole},${part}`)];
       expect(a.kind === 'value' && b.kind === 'value' && a.value === b.value).toBe(true);
     }), { seed: 1 });
+  });
+});
+
+describe('decimals as typed', () => {
+  it.each([['12,50', 2], ['12.5', 1], ['12', 0], ['.125', 3], ['12,', 0]])('%s has %d', (digits, decimals) => {
+    expect(decimalsOf(digits)).toBe(decimals);
   });
 });
 
