@@ -42,6 +42,7 @@ function hasExpectedHeight(stem: StemEntry): boolean {
 
 /**
  * The checks of one project, as they learn from its trees. Pure: no clock, no I/O; the same on phone and server.
+ * An undoubted stem keeps the weight that it had when it was taught: for equal numbers elsewhere, teach in the same order.
  *
  * @returns a Screen; teach, forget, screen and band are O(1) in the number of trees
  * @example
@@ -69,7 +70,8 @@ export function createScreen(options: ScreenOptions): Screen {
   };
 
   const diametersOf = (stem: StemEntry): LogDiameters => {
-    const key = stem.speciesId ?? NO_GROUP;
+    // The group is part of the key: the prior comes from its curve, whichever stem of the species is seen first.
+    const key = `${stem.curveGroup ?? NO_GROUP} ${stem.speciesId ?? NO_GROUP}`;
     let known = diameters.get(key);
     if (!known) {
       const curve = latest(curves, stem.curveGroup ?? '*') ?? latest(curves, '*');
