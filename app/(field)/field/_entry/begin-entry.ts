@@ -10,6 +10,9 @@ export type EntryPlace = {
   readonly order: number;
 };
 
+/** Stems of a tree are a, b, c, …; most trees have one and are called by their tag alone. */
+export const FIRST_STEM = 'a';
+
 const blank = { readings: [], looks: [], focus: 'dbh', typing: null, goesOn: null, touched: false, panel: { kind: 'pad' }, unreadable: null } as const;
 
 function newMeasurement(place: EntryPlace, stemId: string, id: string, speciesId: string | null): StemMeasurement {
@@ -24,7 +27,7 @@ function newMeasurement(place: EntryPlace, stemId: string, id: string, speciesId
 export function beginNewTree(place: EntryPlace, tag: string, ids: NewEntryIds): EntryState {
   const base = { projectId: place.projectId, deleted: false };
   const tree: Tree = { ...base, id: ids.tree, plotId: place.plotId, firstVisitId: place.visitId, tag };
-  const stem: Stem = { ...base, id: ids.stem, treeId: ids.tree, label: '1' };
+  const stem: Stem = { ...base, id: ids.stem, treeId: ids.tree, label: FIRST_STEM };
   return { ...blank, tree, stem, measurement: newMeasurement(place, ids.stem, ids.measurement, null), saved: { tree: false, stem: false, measurement: false } };
 }
 

@@ -1,6 +1,6 @@
 import type { Stem, StemMeasurement, Tree } from '@/lib/schema/field';
 import type { ProjectRecords } from '../_data/project-records';
-import { beginAnotherStem, beginKnownStem, beginNewTree } from './begin-entry';
+import { FIRST_STEM, beginAnotherStem, beginKnownStem, beginNewTree } from './begin-entry';
 import type { EntryPlace } from './begin-entry';
 import type { EntryState } from './types';
 
@@ -8,10 +8,17 @@ const byNumber = new Intl.Collator('en', { numeric: true });
 
 export type KnownStem = { readonly tree: Tree; readonly stem: Stem; readonly speciesId: string | null; readonly label: string };
 
-/** A stem as it is called: "12", or "12.2" for the second stem of a tree. */
+/** A stem as it is called: "12", or "12b" for the second stem of a tree. */
 export function stemLabel(tree: Tree | undefined, stem: Stem | undefined): string {
   const tag = tree?.tag ?? '?';
-  return stem && stem.label !== '1' ? `${tag}.${stem.label}` : tag;
+  return stem && stem.label !== FIRST_STEM ? `${tag}${stem.label}` : tag;
+}
+
+/** The label after the highest in use: a, b, … z, then numbers. */
+function nextStemLabel(labels: readonly string[]): string {
+  const letters = labels.filter((label) => /^[a-z]$/.test(label)).map((label) => label.charCodeAt(0));
+  const code = Math.max(FIRST_STEM.charCodeAt(0), ...letters) + 1;
+  return code <= 'z'.charCodeAt(0) ? String.fromCharCode(code) : String(labels.length + 1);
 }
 
 function lastSpecies(measurements: readonly StemMeasurement[]): string | null {
@@ -64,8 +71,7 @@ export function nextEntry(records: ProjectRecords, visit: Visited, newId: () => 
 
 /** One stem more on a tree. */
 export function anotherStemEntry(records: ProjectRecords, visit: Visited, from: EntryState, newId: () => string): EntryState {
-  const labels = [...records.stem.values()].filter(({ treeId }) => treeId === from.tree.id).map(({ label }) => Number.parseInt(label, 10));
-  const label = String(Math.max(1, ...labels.filter(Number.isFinite)) + 1);
+  const label = nextStemLabel([...records.stem.values()].filter(({ treeId }) => treeId === from.tree.id).map((stem) => stem.label));
   return beginAnotherStem(placeOf(records, visit), from.tree, label, from.measurement.speciesId, { stem: newId(), measurement: newId() });
 }
 

@@ -45,7 +45,7 @@ export function PlotScreen({ records, view, plot }: Props) {
   return (
     <>
       <TopBar back={{ name: 'project', projectId: plot.projectId }} backLabel="Plots" over={summary.stratum?.name ?? ''} title={`Plot ${plot.number}`} />
-      <main className="mx-auto max-w-2xl space-y-4 p-4 pb-10">
+      <main className="mx-auto max-w-2xl space-y-4 p-4">
         {plot.hazardNote !== '' && <Notice tone="halt" icon="hazard" title="Hazard"><p className="text-lg">{plot.hazardNote}</p></Notice>}
         {project && project.emergencyNote !== '' && (
           <Notice icon="phone" title="In an emergency"><p>{project.emergencyNote}</p></Notice>
@@ -62,6 +62,9 @@ export function PlotScreen({ records, view, plot }: Props) {
         </section>
         {!summary.open && <CrewPicker people={people} crew={crew} change={setCrew} />}
         {fault && <Notice tone="halt" icon="hazard" live="alert" title="Not saved"><p>{fault}</p></Notice>}
+        {summary.state === 'finished' && summary.last && <FinishedVisit visit={summary.last} view={view} open={toVisit} />}
+      </main>
+      <div className="sticky bottom-0 mx-auto max-w-2xl border-t border-paper-line bg-paper p-3">
         {summary.open
           ? (
             <Button kind="main" className="flex min-h-[72px] w-full items-center justify-center gap-2 text-xl" onClick={() => toVisit(summary.open!.id)}>
@@ -69,8 +72,7 @@ export function PlotScreen({ records, view, plot }: Props) {
             </Button>
           )
           : <Button kind="main" className="min-h-[72px] w-full text-xl" onClick={() => void start()}>Start a visit</Button>}
-        {summary.state === 'finished' && summary.last && <FinishedVisit visit={summary.last} view={view} open={toVisit} />}
-      </main>
+      </div>
     </>
   );
 }

@@ -13,7 +13,7 @@ type Props = {
 
 /** The field keeps the focus while the pad is touched, so that a touch does not count as leaving it. */
 const keepFocus = (event: MouseEvent) => event.preventDefault();
-const key = 'min-h-[58px] cursor-pointer rounded-lg border-2 border-paper-line bg-paper-raised digits text-3xl font-bold active:bg-bronze-wash';
+const key = 'min-h-target cursor-pointer rounded-lg border-2 border-paper-line bg-paper-raised digits text-3xl font-bold active:bg-bronze-wash';
 const side = 'cursor-pointer rounded-lg border-2 px-1 text-base leading-tight font-bold';
 
 /** Our own digit pad: figures, a decimal sign that is typed and never implied, erase, and two ways on. */

@@ -33,7 +33,7 @@ export function DoubtPanel(props: DoubtPanelProps) {
   return (
     <section aria-label={`Second look at the ${look.quantity === 'dbh' ? 'DBH' : 'height'}`} className="relative overflow-hidden rounded-lg border-2 border-doubt bg-doubt-wash pl-5">
       <span className="doubt-edge absolute inset-y-0 left-0 w-3" aria-hidden="true" />
-      <div className="space-y-2 p-2.5">
+      <div className="space-y-1.5 p-2">
         <p role="alert" className="flex items-start gap-2 text-xl leading-tight font-bold text-doubt"><Icon name="doubt" className="mt-0.5 size-7" />{sentence}</p>
         {band && (
           <div className="rounded-md bg-paper-raised px-2 py-1">
@@ -47,7 +47,7 @@ export function DoubtPanel(props: DoubtPanelProps) {
         </Button>
         {suggestion && (
           <Button className="w-full" onClick={props.take}>
-            Take <b className="digits">{suggestion.value}</b> as {quantityWords[suggestion.quantity]}
+            Take <b className="digits">{suggestion.value}</b> as the {suggestion.quantity === 'dbh' ? 'DBH' : 'height'}
           </Button>
         )}
         <div className="grid grid-cols-2 gap-2">

@@ -54,7 +54,7 @@ export function EntryCard(props: EntryCardProps) {
   };
 
   return (
-    <section data-entry-card aria-label={`Tree ${label}`} className="space-y-2 p-2 pb-3">
+    <section data-entry-card aria-label={`Tree ${label}`} className="space-y-1.5 p-2">
       <div className="flex items-center gap-1.5">
         <button type="button" onClick={() => send({ kind: 'show', panel: { kind: panel.kind === 'tag' ? 'pad' : 'tag' } })} aria-label={`Tree ${label}, choose another`} className="min-h-target min-w-[84px] cursor-pointer rounded-lg px-2 text-left active:bg-paper-sunk">
           <span className="block text-xs leading-tight text-ink-soft">Tree</span>
@@ -65,7 +65,10 @@ export function EntryCard(props: EntryCardProps) {
         </Button>
         <Button className="min-w-0 flex-1 px-2 text-base" disabled={!state.saved.tree} onClick={entry.anotherStem}>Another stem</Button>
       </div>
-      <SpeciesButtons species={species} chosen={measurement.speciesId} choose={(speciesId) => send({ kind: 'species', speciesId })} />
+      {/* A question takes the room of the species on a phone; the values stay in sight. */}
+      <div className={panel.kind === 'pad' ? '' : 'max-[899px]:hidden'}>
+        <SpeciesButtons species={species} chosen={measurement.speciesId} choose={(speciesId) => send({ kind: 'species', speciesId })} />
+      </div>
       <div className="grid grid-cols-2 gap-2">{field('dbh')}{field('height')}</div>
       {question && panel.kind === 'pad' && (
         <button type="button" onClick={() => send({ kind: 'show', panel: { kind: 'doubt', lookId: question.id } })} className="doubt-tag relative flex min-h-target w-full cursor-pointer items-center gap-2 overflow-hidden rounded-lg pr-3 pl-5 text-left font-bold">

@@ -1,5 +1,4 @@
 'use client';
-import { Button } from '@/components/ui/button';
 import { Icon } from '@/components/ui/icon';
 import type { SaveState } from '../_hooks/use-visit-saver';
 import type { StemSummary } from './stem-summary';
@@ -9,7 +8,7 @@ type Props = { readonly last: StemSummary | null; readonly save: SaveState; read
 /** The last entry, large, to be read back aloud; beside it whether it is saved, and undo. */
 export function ReadBack({ last, save, undo }: Props) {
   return (
-    <section aria-label="Last entry" className="flex min-h-[60px] items-center gap-2 border-y border-paper-line bg-paper-sunk pr-1 pl-3">
+    <section aria-label="Last entry" className="flex min-h-target items-center gap-1 border-y border-paper-line bg-paper-sunk pr-1 pl-3">
       <div className="min-w-0 flex-1">
         {last
           ? (
@@ -26,7 +25,12 @@ export function ReadBack({ last, save, undo }: Props) {
           </span>
         </p>
       </div>
-      <Button kind="quiet" className="flex items-center gap-1 px-2" disabled={undo === null} onClick={() => undo?.()}><Icon name="undo" />Undo</Button>
+      <button
+        type="button" disabled={undo === null} onClick={() => undo?.()}
+        className="grid min-h-target min-w-target cursor-pointer place-items-center content-center rounded-lg text-xs font-bold active:bg-bronze-wash disabled:cursor-default disabled:opacity-50"
+      >
+        <Icon name="undo" />Undo
+      </button>
     </section>
   );
 }
