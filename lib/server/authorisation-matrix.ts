@@ -29,5 +29,8 @@ export type AccessRow =
 export const authorisationMatrix: Readonly<Record<string, Partial<Readonly<Record<Method, AccessRow>>>>> = {
   'auth/[...nextauth]/route.ts': { GET: { access: 'sign-in' }, POST: { access: 'sign-in' } },
   'health/route.ts': { GET: { access: 'public', why: 'holds only whether the database answers, its schema number and its epoch' } },
+  'sync/pack/route.ts': { GET: { access: 'sync', sample: (projectId) => ({ query: { project: projectId } }) } },
+  'sync/pull/route.ts': { GET: { access: 'sync', sample: (projectId) => ({ query: { project: projectId, cursor: '0' } }) } },
+  'sync/push/route.ts': { POST: { access: 'signed-in', why: 'each operation is judged by the project it names; a denied one is kept aside and shown to nobody there' } },
   'v1/me/route.ts': { GET: { access: 'signed-in', why: 'holds the caller, and the projects of the caller' } },
 };
