@@ -50,12 +50,12 @@ export function ProjectsScreen() {
                 <h2 className="text-xl font-bold">{name}</h2>
                 <p className="text-ink-soft">{pack ? `On this phone, fetched ${dayWords(pack.fetchedAt)}` : 'Not on this phone yet'} · {role}</p>
                 <div className="mt-3 flex flex-wrap gap-2">
-                  {pack && <Button kind="main" className="flex-1" aria-label={`Open ${name}`} onClick={() => go({ name: 'project', projectId: id })}>Open</Button>}
+                  {pack && <Button kind="main" className="flex-1" onClick={() => go({ name: 'project', projectId: id })}><span>Open<span className="sr-only"> {name}</span></span></Button>}
                   <Button
                     kind={pack ? 'plain' : 'main'} className="flex-1" disabled={fetching !== null || packs === null}
-                    aria-label={pack ? `Fetch the work pack of ${name} again` : `Fetch the work pack of ${name}`} onClick={() => void fetchOne(id)}
+                    onClick={() => void fetchOne(id)}
                   >
-                    {fetching === id ? 'Fetching…' : pack ? 'Fetch again' : 'Fetch work pack'}
+                    {fetching === id ? 'Fetching…' : pack ? 'Fetch again' : 'Fetch work pack'}<span className="sr-only"> of {name}</span>
                   </Button>
                 </div>
               </li>

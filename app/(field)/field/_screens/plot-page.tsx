@@ -71,7 +71,7 @@ export function PlotScreen({ records, view, plot }: Props) {
               Continue the visit<span className="font-normal">({summary.trees} {summary.trees === 1 ? 'tree' : 'trees'})</span>
             </Button>
           )
-          : <Button kind="main" className="min-h-[72px] w-full text-xl" onClick={() => void start()}>Start a visit</Button>}
+          : <Button kind={summary.state === 'finished' ? 'plain' : 'main'} className="min-h-[72px] w-full text-xl" onClick={() => void start()}>Start a visit</Button>}
       </div>
     </>
   );

@@ -15,12 +15,12 @@ export function QueueLine({ projectId }: { readonly projectId: string }) {
   ].join(' · ');
   return (
     <button
-      type="button" onClick={() => go({ name: 'sync', projectId })} aria-label={`Sync: ${words}${quarantined.length > 0 ? `, ${quarantined.length} set aside` : ''}`}
+      type="button" onClick={() => go({ name: 'sync', projectId })}
       className="flex min-h-target w-full cursor-pointer items-center gap-2 border-b border-paper-line bg-paper-sunk px-4 text-left text-sm active:bg-bronze-wash"
     >
       <Icon name="sync" className="size-5" />
       <span className="flex-1">{words}{quarantined.length > 0 && <b className="text-halt"> · {quarantined.length} set aside</b>}</span>
-      <span aria-hidden="true" className="font-bold underline decoration-bronze decoration-2 underline-offset-4">Sync</span>
+      <span className="font-bold underline decoration-bronze decoration-2 underline-offset-4">Sync</span>
     </button>
   );
 }

@@ -42,20 +42,22 @@ export function DoubtPanel(props: DoubtPanelProps) {
           </div>
         )}
         {expected !== null && shown && <p className="digits px-1">{expected}</p>}
-        <Button kind="doubt" className="flex min-h-[72px] w-full items-center justify-center gap-2 text-2xl" onClick={() => props.readAgain(readFirst)} aria-label={`Read again: ${quantityWords[readFirst]}`}>
-          <Icon name="again" className="size-7" />Read again<span className="text-lg font-normal">{quantityWords[readFirst]}</span>
+        <Button kind="doubt" className="flex min-h-[72px] w-full items-center justify-center gap-2 text-2xl" onClick={() => props.readAgain(readFirst)}>
+          <Icon name="again" className="size-7" />Read again <span className="text-lg font-normal">{quantityWords[readFirst]}</span>
         </Button>
         {suggestion && (
           <Button className="w-full" onClick={props.take}>
             Take <b className="digits">{suggestion.value}</b> as the {suggestion.quantity === 'dbh' ? 'DBH' : 'height'}
           </Button>
         )}
-        <div className="grid grid-cols-2 gap-2">
-          <Button className="px-2 text-base" onClick={props.keep}>Keep, with a reason</Button>
-          <Button className="px-2 text-base" onClick={props.later}>Later</Button>
-          {readOther && <Button kind="quiet" className="px-2 text-base" onClick={() => props.readAgain(readOther)}>Read the {readOther === 'dbh' ? 'DBH' : 'height'} instead</Button>}
-          {expected !== null && !shown && <Button kind="quiet" className="px-2 text-base" onClick={() => setShown(true)}>Show what was expected</Button>}
-          <Button kind="quiet" className="px-2 text-base" onClick={props.nextTree}>Next tree</Button>
+        <div className="grid grid-cols-3 gap-1.5">
+          <Button className="px-1 text-base" onClick={props.keep}>Keep, with a reason</Button>
+          <Button className="px-1 text-base" onClick={props.later}>Later</Button>
+          <Button className="px-1 text-base" onClick={props.nextTree}>Next tree</Button>
+        </div>
+        <div className="flex gap-1.5">
+          {readOther && <Button kind="quiet" className="flex-1 px-1 text-base" onClick={() => props.readAgain(readOther)}>Read the {readOther === 'dbh' ? 'DBH' : 'height'} instead</Button>}
+          {expected !== null && !shown && <Button kind="quiet" className="flex-1 px-1 text-base" onClick={() => setShown(true)}>Show what was expected</Button>}
         </div>
       </div>
     </section>

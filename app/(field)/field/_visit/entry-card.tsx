@@ -56,12 +56,13 @@ export function EntryCard(props: EntryCardProps) {
   return (
     <section data-entry-card aria-label={`Tree ${label}`} className="space-y-1.5 p-2">
       <div className="flex items-center gap-1.5">
-        <button type="button" onClick={() => send({ kind: 'show', panel: { kind: panel.kind === 'tag' ? 'pad' : 'tag' } })} aria-label={`Tree ${label}, choose another`} className="min-h-target min-w-[84px] cursor-pointer rounded-lg px-2 text-left active:bg-paper-sunk">
-          <span className="block text-xs leading-tight text-ink-soft">Tree</span>
+        <button type="button" onClick={() => send({ kind: 'show', panel: { kind: panel.kind === 'tag' ? 'pad' : 'tag' } })} className="min-h-target min-w-[84px] cursor-pointer rounded-lg px-2 text-left active:bg-paper-sunk">
+          <span className="block text-xs leading-tight text-ink-soft">Tree </span>
           <span className="digits block text-3xl leading-none font-bold text-bronze">{label}</span>
+          <span className="sr-only">, choose another</span>
         </button>
-        <Button className="min-w-0 flex-1 px-2 text-base" aria-label={`Status and form: ${statusWords[measurement.status]}, ${formWords[measurement.form].toLowerCase()}`} onClick={() => send({ kind: 'show', panel: { kind: panel.kind === 'form' ? 'pad' : 'form' } })}>
-          {statusWords[measurement.status]}, {formWords[measurement.form].toLowerCase()}
+        <Button className="min-w-0 flex-1 px-2 text-base" onClick={() => send({ kind: 'show', panel: { kind: panel.kind === 'form' ? 'pad' : 'form' } })}>
+          <span className="sr-only">Status and form: </span>{statusWords[measurement.status]}, {formWords[measurement.form].toLowerCase()}
         </Button>
         <Button className="min-w-0 flex-1 px-2 text-base" disabled={!state.saved.tree} onClick={entry.anotherStem}>Another stem</Button>
       </div>

@@ -70,15 +70,15 @@ function StemLine({ stem, current, open }: { readonly stem: StemSummary; readonl
   return (
     <button
       type="button" aria-current={current || undefined} onClick={() => open(measurement.id)}
-      className={classNames('relative flex min-h-[64px] min-w-0 flex-1 cursor-pointer items-center gap-x-3 py-1.5 pr-1 pl-4 text-left active:bg-paper-sunk', current && 'bg-bronze-wash')}
+      className={classNames('relative flex min-h-[64px] min-w-0 flex-1 cursor-pointer items-center gap-x-3 py-1.5 pr-1 pl-4 text-left active:bg-paper-sunk', current && 'bg-paper-sunk outline-2 -outline-offset-2 outline-bronze')}
     >
       {openDoubts > 0 && <span className="doubt-edge absolute inset-y-0 left-0 w-2.5" aria-hidden="true" />}
       <span className="digits w-12 shrink-0 text-xl font-bold"><span className="sr-only">Tree </span>{label}</span>
       <span className="min-w-0 flex-1 leading-tight min-[600px]:flex min-[600px]:items-center min-[600px]:gap-4">
         <span className="block truncate min-[600px]:flex-1"><b>{species?.localName ?? 'No species'}</b>{state && <span className="text-ink-soft">, {state}</span>}</span>
         <span className="digits block truncate text-lg">{dbh ?? 'no DBH'} · {height ?? 'no height'}</span>
+        {openDoubts > 0 && <span className="flex items-center gap-1 text-sm font-bold text-doubt"><Icon name="doubt" className="size-4" />{openDoubts === 1 ? 'open doubt' : `${openDoubts} open doubts`}</span>}
       </span>
-      {openDoubts > 0 && <span className="flex items-center gap-1 text-sm leading-tight font-bold text-doubt"><Icon name="doubt" className="size-5" /><span>{openDoubts === 1 ? 'open doubt' : `${openDoubts} open doubts`}</span></span>}
       {openDoubts === 0 && quiet > 0 && <span className="text-sm leading-tight text-ink-soft">marked</span>}
     </button>
   );

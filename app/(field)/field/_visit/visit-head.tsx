@@ -33,20 +33,20 @@ export function VisitHead({ plot, visit, people, changeCrew, trees, doubts, list
       <h1 className="shrink-0 leading-tight font-bold"><span className="block text-xs font-normal text-ink-soft">Plot</span><span className="digits text-xl">{plot.number}</span></h1>
       <button
         type="button" onClick={() => changeCrew({ measurerId: recorderId, recorderId: measurerId })}
-        aria-label={`${nameOf(measurerId)} measures, ${nameOf(recorderId)} records. Swap`}
         className="mx-1 flex min-h-[60px] min-w-0 flex-1 cursor-pointer items-center justify-center gap-2 px-1 text-left text-sm leading-tight active:bg-paper-sunk"
       >
-        <span className="min-w-0"><span className="block truncate"><b>{nameOf(measurerId)}</b> measures</span><span className="block truncate"><b>{nameOf(recorderId)}</b> records</span></span>
+        <span className="min-w-0"><span className="block truncate"><b>{nameOf(measurerId)}</b> measures </span><span className="block truncate"><b>{nameOf(recorderId)}</b> records</span></span>
+        <span className="sr-only">. Swap</span>
         <Icon name="swap" className="size-5" />
       </button>
       {wide && <ThemeToggle />}
       {!wide && (
         <button
-          type="button" aria-pressed={listed} onClick={toggleList} aria-label={`${listed ? 'Back to the entry' : 'List'}: ${count}, ${doubts} open doubts`}
+          type="button" aria-pressed={listed} onClick={toggleList}
           className="flex min-h-[60px] min-w-[84px] cursor-pointer items-center justify-center gap-1.5 px-2 text-sm leading-tight font-bold active:bg-paper-sunk"
         >
           <Icon name={listed ? 'back' : 'list'} className="size-5" />
-          <span className="text-left">{listed ? 'Entry' : count}{doubts > 0 && <span className="block text-doubt">{doubts} {doubts === 1 ? 'doubt' : 'doubts'}</span>}</span>
+          <span className="text-left">{listed ? 'Entry' : <><span className="sr-only">List: </span>{count}</>} {doubts > 0 && <span className="block text-doubt">{doubts} {doubts === 1 ? 'doubt' : 'doubts'}</span>}</span>
         </button>
       )}
     </header>
