@@ -19,6 +19,7 @@ export class ProjectView {
   readonly #loadListeners = new Set<() => void>();
   /** Saves of our own under way or just told of: their notices need no reading anew. */
   #own = 0;
+  #saves = 0;
   #turn: Promise<unknown> = Promise.resolve();
   #reloading: ReturnType<typeof setTimeout> | null = null;
   #stop: (() => void) | null = null;
@@ -43,7 +44,13 @@ export class ProjectView {
   }
 
   async reload(): Promise<void> {
-    const records = await loadProject(this.store, this.projectId);
+    let records: ProjectRecords | null;
+    let seen: number;
+    // What is saved while all is read may be missing from what was read.
+    do {
+      seen = this.#saves;
+      records = await loadProject(this.store, this.projectId);
+    } while (seen !== this.#saves);
     this.#set(records ? { kind: 'ready', records } : { kind: 'missing' });
     for (const listener of this.#loadListeners) listener();
   }
@@ -62,6 +69,7 @@ export class ProjectView {
         // The store tells its listeners in the same turn as it answers; a later notice is somebody else's.
         setTimeout(() => { this.#own -= 1; }, 0);
       }
+      this.#saves += 1;
       if (this.#snapshot.kind === 'ready') this.#set({ kind: 'ready', records: applyChanges(this.#snapshot.records, changes) });
     };
     const turn = this.#turn.then(run, run);
@@ -75,11 +83,12 @@ export class ProjectView {
   }
 
   #changed(projectId: string | null): void {
-    if (projectId !== null && projectId !== this.projectId) return;
+    // Null: only the queue changed.
+    if (projectId !== this.projectId) return;
     if (this.#own > 0) return;
     // A sync brings page after page; reading all records once after them is enough.
     if (this.#reloading) clearTimeout(this.#reloading);
-    this.#reloading = setTimeout(() => void this.#turn.then(() => this.reload()), 250);
+    this.#reloading = setTimeout(() => void this.reload(), 250);
   }
 
   #set(snapshot: ProjectSnapshot): void {

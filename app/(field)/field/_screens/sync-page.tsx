@@ -3,9 +3,11 @@ import { useState } from 'react';
 import { Button } from '@/components/ui/button';
 import { Icon } from '@/components/ui/icon';
 import { Notice } from '@/components/ui/notice';
+import { problemWords } from '../_data/sync-words';
 import { dayWords } from '../_data/time-words';
 import { useQueue } from '../_hooks/use-queue';
 import { useField } from '../_shell/field-context';
+import { SignInAgain } from '../_shell/sign-in-again';
 import { TopBar } from '../_shell/top-bar';
 
 const entityWords: Readonly<Record<string, string>> = {
@@ -14,21 +16,17 @@ const entityWords: Readonly<Record<string, string>> = {
 
 /** Camp sync: what waits, what came through, what the server set aside and why. */
 export function SyncScreen({ projectId, name }: { readonly projectId: string; readonly name: string }) {
-  const { syncNow, go, store } = useField();
+  const { sync: { status, syncNow }, go, store } = useField();
   const queue = useQueue(projectId);
-  const [state, setState] = useState<'idle' | 'busy' | 'done' | 'failed'>('idle');
-  const [fault, setFault] = useState('');
+  const [asked, setAsked] = useState(false);
+  const [running, setRunning] = useState(false);
+  const busy = running || (status !== null && status.phase !== 'idle' && status.phase !== 'backing-off' && status.phase !== 'sign-in-needed');
+  const problem = problemWords(status?.problem ?? null);
 
   async function run() {
-    if (!syncNow) return;
-    setState('busy');
-    try {
-      await syncNow();
-      setState('done');
-    } catch (error) {
-      setFault(error instanceof Error ? error.message : String(error));
-      setState('failed');
-    }
+    setRunning(true);
+    await syncNow().finally(() => setRunning(false));
+    setAsked(true);
   }
 
   return (
@@ -40,15 +38,16 @@ export function SyncScreen({ projectId, name }: { readonly projectId: string; re
           <dt>Last sync</dt><dd className="text-right">{queue?.lastSyncAt ? dayWords(queue.lastSyncAt) : 'never'}</dd>
           <dt>Set aside by the server</dt><dd className="digits text-right text-2xl font-bold">{queue?.quarantined.length ?? '…'}</dd>
         </dl>
-        <Button kind="main" className="flex w-full items-center justify-center gap-2 text-xl" disabled={!syncNow || state === 'busy'} onClick={() => void run()}>
-          <Icon name="sync" />{state === 'busy' ? 'Syncing…' : 'Sync now'}
+        <Button kind="main" className="flex w-full items-center justify-center gap-2 text-xl" disabled={status === null || busy} onClick={() => void run()}>
+          <Icon name="sync" />{busy ? 'Syncing…' : 'Sync now'}
         </Button>
         <div aria-live="polite">
-          {state === 'done' && queue && (
+          {problem !== null && !busy && <Notice icon="phone" title="Not in step with the server"><p>{problem} Everything stays saved on this phone.</p></Notice>}
+          {problem === null && asked && !busy && queue && (
             <Notice tone="fine" icon="check"><p>{queue.unsent === 0 ? 'Everything on this phone has reached the server.' : `${queue.unsent} changes still wait; the next sync goes on with them.`}</p></Notice>
           )}
-          {state === 'failed' && <Notice icon="phone" title="The server was not reached."><p>Everything stays saved on this phone. {fault}</p></Notice>}
         </div>
+        {status?.problem === 'sign-in' && <SignInAgain />}
         {queue && queue.quarantined.length > 0 && (
           <section>
             <h2 className="text-xl font-bold">Set aside</h2>

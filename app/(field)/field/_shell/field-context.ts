@@ -2,6 +2,7 @@
 import { createContext, useContext } from 'react';
 import type { FieldStore, Identity } from '@/lib/client/field-store-types';
 import type { ProjectView } from '../_data/project-view';
+import type { FieldSync } from '../_hooks/use-sync';
 import type { FieldRoute } from './router';
 
 export type Theme = 'paper' | 'dusk';
@@ -16,7 +17,7 @@ export type FieldContextValue = {
   readonly signOut: () => Promise<void>;
   /** After a sign-in or a changed list of projects. */
   readonly setIdentity: (identity: Identity) => Promise<void>;
-  readonly syncNow: (() => Promise<void>) | null;
+  readonly sync: FieldSync;
 };
 
 export const FieldContext = createContext<FieldContextValue | null>(null);

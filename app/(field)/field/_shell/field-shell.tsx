@@ -27,18 +27,18 @@ export function FieldShell() {
   const store = device.kind === 'open' ? device.store : null;
   const identity = device.kind === 'open' ? device.identity : null;
   const { theme, setTheme } = useTheme(store);
-  const syncNow = useSync(store, identity);
+  const sync = useSync(store, identity?.userId ?? null);
   usePlace(store, identity !== null, route);
 
   const value = useMemo<FieldContextValue | null>(() => (store && identity ? {
-    store, identity, go, theme, setTheme, syncNow, setIdentity,
+    store, identity, go, theme, setTheme, sync, setIdentity,
     view: (projectId) => viewOf(store, projectId),
     signOut: async () => {
       await setIdentity(null);
       // The person has left this device whether or not the server hears of it now.
       await endSession().catch(() => undefined);
     },
-  } : null), [store, identity, go, theme, setTheme, syncNow, setIdentity]);
+  } : null), [store, identity, go, theme, setTheme, sync, setIdentity]);
 
   if (device.kind === 'failed') return <StoreFailed reason={device.reason} retry={retry} />;
   if (!store) return <p className="p-6 text-xl" role="status">Opening the field book…</p>;
