@@ -35,7 +35,7 @@ export class SyncEngine {
   /** Hands in an event; resolves when all that follows from it, waits apart, is done. */
   send(event: Extract<SessionEvent, { kind: 'wanted' | 'signed-in' | 'due' }>): Promise<void> {
     this.#waiting.push(event);
-    this.#running ??= this.#run().finally(() => { this.#running = null; });
+    this.#running ??= this.#run();
     return this.#running;
   }
 
@@ -49,7 +49,12 @@ export class SyncEngine {
     for (;;) {
       // Events from outside come first: a save during a pull is sent in the same session.
       const event = this.#waiting.shift() ?? (await this.#nextOf(effects));
-      if (event === null) return;
+      if (event === null) {
+        // One may have been handed in since the question was asked.
+        if (this.#waiting.length > 0) continue;
+        this.#running = null;
+        return;
+      }
       const next = step(this.#state, event, this.ports.random());
       if (next.effects.some(({ kind }) => kind === 'lock')) this.#done.clear();
       this.#state = next.state;
