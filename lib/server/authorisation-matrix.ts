@@ -13,6 +13,13 @@ export type AccessRow =
   /** Members whose role allows `action`; others are told 404. */
   | { readonly access: Action; readonly sample?: (projectId: string) => SampleCall };
 
+function sampleImport(): FormData {
+  const form = new FormData();
+  form.set('file', new File(['dbh,height,species\n'], 'trees.csv', { type: 'text/csv' }));
+  for (const [name, value] of Object.entries({ dbhUnit: 'cm', lengthUnit: 'm', dbh: 'dbh', height: 'height', species: 'species' })) form.set(name, value);
+  return form;
+}
+
 /**
  * Who may call what: file below app/api → method → row. Tests list the route files on disk and fail when a file or an
  * exported method has no row, when a row has no method, and when a row differs from what the handler itself declares.
@@ -33,4 +40,23 @@ export const authorisationMatrix: Readonly<Record<string, Partial<Readonly<Recor
   'sync/pull/route.ts': { GET: { access: 'sync', sample: (projectId) => ({ query: { project: projectId, cursor: '0' } }) } },
   'sync/push/route.ts': { POST: { access: 'signed-in', why: 'each operation is judged by the project it names; a denied one is kept aside and shown to nobody there' } },
   'v1/me/route.ts': { GET: { access: 'signed-in', why: 'holds the caller, and the projects of the caller' } },
+  'v1/projects/route.ts': { GET: { access: 'signed-in', why: 'holds the projects of the caller' } },
+  'v1/projects/[projectId]/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/visits/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/visits/[visitId]/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/trees/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/trees.csv/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/second-looks/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/second-looks.csv/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/dictionary/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/dictionary.csv/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/quarantine/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/curves/route.ts': {
+    GET: { access: 'data.read' },
+    POST: { access: 'curve.publish', sample: () => ({ body: { curveGroup: 'oak', form: 'curtis' } }) },
+  },
+  'v1/projects/[projectId]/imports/route.ts': {
+    GET: { access: 'data.read' },
+    POST: { access: 'data.import', sample: () => ({ form: sampleImport() }) },
+  },
 };

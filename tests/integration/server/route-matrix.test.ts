@@ -72,7 +72,9 @@ describe('a person of another project', () => {
     const member = await makeUser({ roles: { [theirs.id]: 'analyst' } });
     const response = await call(member, file, method, row, theirs.id);
     // What is asked for inside the project may be missing; the body then names something else than the project.
-    expect([401, 403, 415, 422]).not.toContain(response.status);
+    // A file that the handler itself refuses says so in `detail`; the wrapper's own 422 has none.
+    const byHandler = response.status === 422 && typeof (await response.clone().json()).detail === 'string';
+    expect(byHandler ? [] : [401, 403, 415, 422]).not.toContain(response.status);
   });
 
   it.each(rows.filter(({ row }) => row.access !== 'public' && row.access !== 'sign-in'))('$method $file: 401 for nobody', async ({ file, method }) => {

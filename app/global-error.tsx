@@ -1,0 +1,16 @@
+'use client';
+import './globals.css';
+
+export default function GlobalError({ reset }: { readonly error: Error; readonly reset: () => void }) {
+  return (
+    <html lang="en">
+      <body>
+        <main className="mx-auto max-w-xl px-4 pt-16">
+          <h1 className="book-head pb-2 text-2xl font-bold">Lammas could not start this page</h1>
+          <p className="pt-4">What was recorded is safe. Try again; if it stays like this, tell your administrator when it happened.</p>
+          <button type="button" onClick={reset} className="mt-4 min-h-12 cursor-pointer rounded-lg border-2 border-bronze-strong bg-bronze px-4 font-bold text-bronze-on">Try again</button>
+        </main>
+      </body>
+    </html>
+  );
+}
