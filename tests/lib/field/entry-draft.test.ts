@@ -62,26 +62,55 @@ describe('what a kill leaves', () => {
 });
 
 describe('keeping the draft', () => {
-  it('the first key is kept at once, the last state when the page is left', () => {
+  function slowStore() {
     const kept: Draft[] = [];
+    const writes: (() => void)[] = [];
+    const saveDraft = (draft: Draft) => new Promise<void>((resolve) => {
+      kept.push(draft);
+      writes.push(resolve);
+    });
+    const settle = async () => {
+      writes.shift()?.();
+      await new Promise((resolve) => setTimeout(resolve, 0));
+    };
+    return { kept, saveDraft, settle, draft: () => Promise.resolve(null), digits: () => kept.map(({ body }) => parseDraft(body)?.typing?.digits) };
+  }
+  const keeperOf = (store: ReturnType<typeof slowStore>, state: EntryState) => new DraftKeeper(store, { id: state.measurement.visitId, projectId: state.tree.projectId });
+
+  it('the first key is kept at once, and what is typed meanwhile when that write has ended, the last state only', async () => {
+    const store = slowStore();
     const state = begin();
-    const keeper = new DraftKeeper({ draft: () => Promise.resolve(null), saveDraft: (draft) => Promise.resolve(void kept.push(draft)) }, { id: state.measurement.visitId, projectId: state.tree.projectId });
-    const digits = () => kept.map(({ body }) => parseDraft(body)?.typing?.digits);
-    keeper.offer(run(state, key('1')).state);
-    expect(digits()).toEqual(['1']);
-    keeper.offer(run(state, key('12')).state);
-    expect(digits()).toEqual(['1']);
-    keeper.stop();
-    expect(digits()).toEqual(['1', '12']);
+    const keeper = keeperOf(store, state);
+    for (const text of ['1', '12', '12,', '12,5']) keeper.offer(run(state, key(text)).state);
+    expect(store.digits()).toEqual(['1']);
+    await store.settle();
+    expect(store.digits()).toEqual(['1', '12,5']);
+    await store.settle();
+    expect(store.digits()).toHaveLength(2);
   });
 
-  it('what was saved with a commit is not saved once more', () => {
-    const kept: Draft[] = [];
+  it('a key typed while a commit carries a draft is kept after it, never overtaken by the older card', () => {
+    const store = slowStore();
     const state = begin();
-    const keeper = new DraftKeeper({ draft: () => Promise.resolve(null), saveDraft: (draft) => Promise.resolve(void kept.push(draft)) }, { id: state.measurement.visitId, projectId: state.tree.projectId });
+    const keeper = keeperOf(store, state);
     keeper.note(state);
-    expect(keeper.take()?.put.id).toBe(`visit:${state.measurement.visitId}`);
-    keeper.stop();
-    expect(kept).toEqual([]);
+    expect(keeper.hold()?.put.id).toBe(`visit:${state.measurement.visitId}`);
+    keeper.offer(run(state, key('2')).state);
+    expect(store.kept).toEqual([]);
+    keeper.release(true);
+    expect(store.digits()).toEqual(['2']);
+  });
+
+  it('what was saved with a commit is not saved once more; after a failed one it is', () => {
+    const store = slowStore();
+    const state = begin();
+    const keeper = keeperOf(store, state);
+    keeper.note(state);
+    keeper.hold();
+    keeper.release(true);
+    expect(store.kept).toEqual([]);
+    keeper.hold();
+    keeper.release(false);
+    expect(store.kept).toHaveLength(1);
   });
 });

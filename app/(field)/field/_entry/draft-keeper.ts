@@ -3,16 +3,16 @@ import type { Json } from '@/lib/schema/common';
 import { draftOf, entryDraftId } from './entry-draft';
 import type { EntryState } from './types';
 
-const EVERY_MS = 250;
-
 /**
- * Keeps what is typed and not saved: at the first key at once, then every 250 ms while typing goes on, and whenever
- * `flush` is called. A kill costs at most the keys of the last quarter second.
+ * Keeps what is typed and not saved: each state as soon as the one before is on disk, so that a kill costs at most the
+ * keys of one write. While a commit carries a draft of its own, others wait: the two would overtake each other, and an
+ * older card would stand over a newer one.
  */
 export class DraftKeeper {
   #state: EntryState | null = null;
   #kept: string | null = null;
-  #timer: ReturnType<typeof setTimeout> | null = null;
+  #writing = false;
+  #held = 0;
 
   constructor(readonly store: Pick<FieldStore, 'draft' | 'saveDraft'>, readonly visit: { readonly id: string; readonly projectId: string }) {}
 
@@ -26,35 +26,42 @@ export class DraftKeeper {
     this.#state = state;
   }
 
-  /** The card as it stands now, to be kept soon. */
+  /** The card as it stands now, to be kept at once. */
   offer(state: EntryState): void {
     this.note(state);
-    if (this.#timer !== null) return;
     this.flush();
-    this.#timer = setTimeout(() => {
-      this.#timer = null;
-      this.flush();
-    }, EVERY_MS);
   }
 
-  /** The draft as it stands, to be saved with a commit. */
-  readonly take = (): { put: Draft } | undefined => {
+  /** The draft for a commit about to begin; `release` must follow when it has ended. */
+  readonly hold = (): { put: Draft } | undefined => {
+    this.#held += 1;
+    return this.#take();
+  };
+
+  readonly release = (committed: boolean): void => {
+    this.#held -= 1;
+    if (!committed) this.#kept = null;
+    this.flush();
+  };
+
+  readonly flush = (): void => {
+    if (this.#writing || this.#held > 0 || !this.#state || JSON.stringify(draftOf(this.#state)) === this.#kept) return;
+    const draft = this.#take();
+    if (!draft) return;
+    this.#writing = true;
+    this.store.saveDraft(draft.put)
+      // A draft that was not kept is tried again with the next key; values themselves go through commit.
+      .catch((error: unknown) => console.warn('The draft was not kept:', error))
+      .finally(() => {
+        this.#writing = false;
+        this.flush();
+      });
+  };
+
+  #take(): { put: Draft } | undefined {
     if (!this.#state) return undefined;
     const text = JSON.stringify(draftOf(this.#state));
     this.#kept = text;
     return { put: { id: entryDraftId(this.visit.id), projectId: this.visit.projectId, updatedAt: new Date().toISOString(), body: JSON.parse(text) as Json } };
-  };
-
-  readonly flush = (): void => {
-    if (!this.#state || JSON.stringify(draftOf(this.#state)) === this.#kept) return;
-    const draft = this.take();
-    // A draft that was not kept is tried again with the next key; values themselves go through commit.
-    if (draft) this.store.saveDraft(draft.put).catch((error: unknown) => console.warn('The draft was not kept:', error));
-  };
-
-  stop(): void {
-    if (this.#timer !== null) clearTimeout(this.#timer);
-    this.#timer = null;
-    this.flush();
   }
 }

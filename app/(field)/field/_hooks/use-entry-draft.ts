@@ -22,7 +22,7 @@ export function useEntryDraft(visit: { readonly id: string; readonly projectId: 
       window.removeEventListener('pagehide', keeper.flush);
       window.removeEventListener('blur', keeper.flush);
       document.removeEventListener('visibilitychange', hidden);
-      keeper.stop();
+      keeper.flush();
     };
   }, [keeper]);
   return keeper;

@@ -44,6 +44,7 @@ export function useEntry(visit: Visited, records: ProjectRecords, ports: EntryPo
   const [state, setState] = useState<EntryState | null>(null);
   const [undos, setUndos] = useState<readonly Undo[]>([]);
   const now = useRef<EntryState | null>(null);
+  const typedHere = useRef(false);
   /** Records with the changes under way, for tags and order only; the screen shows what is saved. */
   const ahead = useRef(records);
   const stored = useRef(records);
@@ -75,12 +76,13 @@ export function useEntry(visit: Visited, records: ProjectRecords, ports: EntryPo
     const former = ahead.current;
     ahead.current = applyChanges(former, changes);
     setUndos((kept) => [...kept, { before, changes, records: former }].slice(-KEPT_UNDOS));
-    saver.save(changes, { draft: draft.take, ...(reason ? { reason } : {}) });
+    saver.save(changes, { draft, ...(reason ? { reason } : {}) });
   }, [draft, saver]);
 
   const send = useCallback((event: EntryEvent) => {
     const before = now.current;
     if (!before || !ports) return;
+    typedHere.current = typedHere.current || event.kind === 'type' || event.kind === 'key' || event.kind === 'erase';
     const step = transition(before, event, ports);
     now.current = step.state;
     draft.note(step.state);
@@ -100,7 +102,8 @@ export function useEntry(visit: Visited, records: ProjectRecords, ports: EntryPo
   }, [ports, persist, show, visit, draft]);
 
   useEffect(() => {
-    if (!state?.typing || state.typing.digits === '' || state.panel.kind !== 'pad') return;
+    // Digits that a draft brought back wait for the person; only what is typed now comes to stand by a pause.
+    if (!typedHere.current || !state?.typing || state.typing.digits === '' || state.panel.kind !== 'pad') return;
     const timer = setTimeout(() => send({ kind: 'pause' }), PAUSE_MS);
     return () => clearTimeout(timer);
   }, [state?.typing, state?.panel.kind, send]);
@@ -114,7 +117,7 @@ export function useEntry(visit: Visited, records: ProjectRecords, ports: EntryPo
     // What was typed is not put back: by itself it would come to stand again after a pause.
     const question = openQuestion(last.before.looks);
     show({ ...withNewIds(last.before, v7), typing: null, goesOn: null, panel: question ? { kind: 'doubt', lookId: question.id } : { kind: 'pad' } });
-    saver.save(back, { draft: draft.take, reason: 'Undone' });
+    saver.save(back, { draft, reason: 'Undone' });
   }, [undos, show, saver, draft]);
 
   if (!state || !ports) return null;

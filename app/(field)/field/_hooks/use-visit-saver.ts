@@ -1,13 +1,14 @@
 'use client';
 import { useEffect, useMemo, useRef, useState } from 'react';
-import type { Draft } from '@/lib/client/field-store-types';
 import type { RecordChange } from '@/lib/schema/record-change';
+import type { DraftKeeper } from '../_entry/draft-keeper';
 import type { ProjectView } from '../_data/project-view';
 import { useField } from '../_shell/field-context';
 
 type Waiting = {
   readonly changes: readonly RecordChange[];
-  readonly draft: (() => { put: Draft } | undefined) | undefined;
+  /** Its draft is saved in the same transaction. */
+  readonly draft: DraftKeeper | undefined;
   readonly reason: string | undefined;
 };
 
@@ -19,7 +20,7 @@ export type SaveState =
   | { readonly kind: 'failed'; readonly reason: string; readonly waiting: number };
 
 export type VisitSaver = {
-  readonly save: (changes: readonly RecordChange[], options?: { draft?: () => { put: Draft } | undefined; reason?: string }) => void;
+  readonly save: (changes: readonly RecordChange[], options?: { draft?: DraftKeeper; reason?: string }) => void;
   readonly idle: () => boolean;
 };
 
@@ -44,8 +45,14 @@ export function useVisitSaver(view: ProjectView, saved: (changes: readonly Recor
       try {
         for (let batch = waiting.current[0]; batch; batch = waiting.current[0]) {
           setState({ kind: 'saving' });
-          const draft = batch.draft?.();
-          await view.commit(batch.changes, identity.userId, { ...(draft ? { draft } : {}), ...(batch.reason ? { reason: batch.reason } : {}) });
+          const draft = batch.draft?.hold();
+          let committed = false;
+          try {
+            await view.commit(batch.changes, identity.userId, { ...(draft ? { draft } : {}), ...(batch.reason ? { reason: batch.reason } : {}) });
+            committed = true;
+          } finally {
+            batch.draft?.release(committed);
+          }
           waiting.current.shift();
           told.current(batch.changes);
         }

@@ -50,7 +50,7 @@ export function DoubtPanel(props: DoubtPanelProps) {
             Take <b className="digits">{suggestion.value}</b> as the {suggestion.quantity === 'dbh' ? 'DBH' : 'height'}
           </Button>
         )}
-        <div className="grid grid-cols-3 gap-1.5">
+        <div className="grid grid-cols-[1.7fr_1fr_1fr] gap-1.5">
           <Button className="px-1 text-base" onClick={props.keep}>Keep, with a reason</Button>
           <Button className="px-1 text-base" onClick={props.later}>Later</Button>
           <Button className="px-1 text-base" onClick={props.nextTree}>Next tree</Button>
