@@ -6,7 +6,7 @@ const FAR_SIGMAS = Math.sqrt(-2 * Math.log(0.001));
 /** Own choice: fixes within this distance stay, because a receiver that smooths repeats one place and then steps. */
 const ALWAYS_KEPT_M = 3;
 /** Above this count the start is looked for among an even selection; it costs n². */
-const START_AT_MOST = 240;
+const START_AT_MOST = 60;
 const MEDIAN_SIGMAS = Math.sqrt(2 * Math.LN2);
 
 const distance = (a: PlanePoint, b: PlanePoint): number => Math.hypot(a.eastM - b.eastM, a.northM - b.northM);

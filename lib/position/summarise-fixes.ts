@@ -4,7 +4,7 @@ import type { EffectiveCount } from './effective-count';
 import type { Geographic } from './geographic';
 import { isGeographic } from './geographic';
 import { keepFixesAtCentre } from './keep-fixes-at-centre';
-import { fromPlane, toPlane } from './local-plane';
+import { fromPlane, shortTurn, toPlaneNearby } from './local-plane';
 import type { PlanePoint } from './local-plane';
 import { median } from './median';
 import { refuse } from './refusal';
@@ -83,9 +83,13 @@ export function summariseFixes(fixes: readonly Fix[], rule: FixRule): FixSummary
   if (fixes.length === 0) return refuse('no-fixes');
   // In time order, for the serial correlation; equal times keep their order.
   const sound = fixes.map((fix, index) => ({ fix, index })).filter(({ fix }) => isSound(fix)).sort((a, b) => a.fix.atMs - b.fix.atMs);
-  const pivot = sound[0]?.fix;
-  if (pivot === undefined) return refuse('no-sound-fix');
-  const inPlane = sound.map(({ fix }) => toPlane(pivot, fix));
+  const first = sound[0]?.fix;
+  if (first === undefined) return refuse('no-sound-fix');
+  const pivot: Geographic = {
+    lat: median(sound.map(({ fix }) => fix.lat)),
+    lon: shortTurn(0, first.lon + median(sound.map(({ fix }) => shortTurn(first.lon, fix.lon)))),
+  };
+  const inPlane = sound.map(({ fix }) => toPlaneNearby(pivot, fix));
   const kept = keepFixesAtCentre(inPlane);
   const usedPoints = inPlane.filter((_, i) => kept[i]);
   const accuracies = sound.filter((_, i) => kept[i]).map(({ fix }) => fix.accuracyM);

@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { geodesicBetween, geodesicFrom } from '@/lib/position/geodesic';
 import { judgePosition } from '@/lib/position/judge-position';
+import { toPlane, toPlaneNearby } from '@/lib/position/local-plane';
 import { summariseFixes } from '@/lib/position/summarise-fixes';
 import type { Fix, FixRule } from '@/lib/position/summarise-fixes';
 import { given } from '../../support/given';
@@ -113,6 +114,23 @@ describe('honest precision', () => {
 
   it('one fix has no scatter', () => {
     expect(given(summariseFixes([fixAt(0, 0)], rule)).scatter).toBeNull();
+  });
+});
+
+describe('the plane for places close together', () => {
+  it('has the lengths of geodesics to 1e-5 m within 1 km up to 70 degrees, across the 180th meridian too', () => {
+    for (const lat of [0, -33, 61.5, 70]) for (const lon of [25, 180, -180]) for (const azimuth of [0, 37, 90, 211]) {
+      const near = toPlaneNearby({ lat, lon }, given(geodesicFrom({ lat, lon }, azimuth, 1000)));
+      expect(Math.abs(Math.hypot(near.eastM, near.northM) - 1000)).toBeLessThan(1e-5);
+    }
+  });
+
+  it('turns a place 100 m off aside by less than 2 mm at 61.5 degrees', () => {
+    for (const azimuth of [0, 37, 90, 211]) {
+      const place = given(geodesicFrom(centre, azimuth, 100));
+      const [near, exact] = [toPlaneNearby(centre, place), toPlane(centre, place)];
+      expect(Math.hypot(near.eastM - exact.eastM, near.northM - exact.northM)).toBeLessThan(2e-3);
+    }
   });
 });
 
