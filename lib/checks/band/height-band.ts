@@ -12,6 +12,8 @@ export type BandSource = 'curve' | 'pooled' | 'weak';
 const WORTH: Readonly<Record<'curve' | 'pooled', number>> = { curve: 50, pooled: 10 };
 /** Beyond the known diameters by more than this share there is no band. */
 const REACH = 0.25;
+/** Steps over ln d in which the diameters of a height are sought. */
+const GRID = 60;
 /** Only a tree that is more likely right than wrong stretches the known diameters. */
 const LEAST_WEIGHT = 0.5;
 
@@ -100,6 +102,31 @@ export class HeightBand {
     const [low, high] = predictiveInterval(predicted, level);
     const bh = this.#breastHeightM;
     return { lowM: bh + Math.exp(low), highM: bh + Math.exp(high), medianM: bh + Math.exp(predicted.location), widened: this.outside(dCm) > 0 };
+  }
+
+  /**
+   * Diameters, cm, at which this height would be no surprise: from the smallest to the largest whose tail probability is at
+   * least `rate`, among those for which there is a band. Null where there is none.
+   */
+  diametersFor(plotId: string, hM: number, rate: number): readonly [number, number] | null {
+    const fits = (logD: number) => (this.tail(plotId, Math.exp(logD), hM) ?? 0) >= rate;
+    const [least, most] = this.#diameters.around(this.#known);
+    const [from, to] = [Math.log(least / (1 + REACH)), Math.log(most * (1 + REACH))];
+    const grid = Array.from({ length: GRID + 1 }, (_, i) => from + ((to - from) * i) / GRID);
+    const first = grid.findIndex(fits);
+    if (first < 0) return null;
+    const last = grid.findLastIndex(fits);
+    const edge = (inside: number, outside: number | undefined) => {
+      if (outside === undefined) return inside;
+      let [good, bad] = [inside, outside];
+      for (let i = 0; i < 14; i++) {
+        const middle = (good + bad) / 2;
+        if (fits(middle)) good = middle;
+        else bad = middle;
+      }
+      return good;
+    };
+    return [Math.exp(edge(grid[first]!, grid[first - 1])), Math.exp(edge(grid[last]!, grid[last + 1]))];
   }
 
   /** Two-sided predictive tail probability of a height; null where there is no band or h is not above bh. */

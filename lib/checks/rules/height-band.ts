@@ -22,7 +22,9 @@ export const heightBandRule: Rule = {
     const named = level === 'look' ? causes?.named ?? null : null;
     const quantity = named?.hypothesis.quantity ?? 'height';
     const interval = band.interval(stem.plotId, stem.dbhCm, 1 - heightRate);
-    const expected = quantity === 'dbh' ? diameterInterval(logDiameter, 1 - heightRate) : interval && ([interval.lowM, interval.highM] as const);
+    const expected = quantity === 'dbh'
+      ? band.diametersFor(stem.plotId, stem.heightM, heightRate) ?? diameterInterval(logDiameter, 1 - heightRate)
+      : interval && ([interval.lowM, interval.highM] as const);
     return makeDoubt(heightBandRule, level, stem, quantity, units, { expected, tail, named });
   },
 };

@@ -49,6 +49,16 @@ describe('likely causes in a metric stand with a published curve', () => {
     expect(Math.abs(looks[0]!.suggestion!.canonical / meant - 1)).toBeLessThan(0.02);
   });
 
+  it('a doubt about the diameter shows the diameters that would go with the height', () => {
+    const screen = stand();
+    const [doubt] = screen.screen(makeStem(metric, (tree.d / 2.54).toFixed(1), height));
+    expect(doubt).toMatchObject({ quantity: 'dbh', rule: 'height-band' });
+    expect(doubt!.enteredCanonical!).toBeLessThan(doubt!.expectedLow!);
+    // At its edge the height stops being a surprise: silent just inside, asked about just outside.
+    const looks = (d: number) => screen.screen(makeStem(metric, '30', height, { dbhCm: d })).filter(({ rule, level }) => rule === 'height-band' && level === 'look').length;
+    expect([looks(doubt!.expectedLow! * 1.002), looks(doubt!.expectedLow! * 0.998)]).toEqual([0, 1]);
+  });
+
   it('243 for 24.3 is seen from the diameter alone', () => {
     expect(stand().screen(makeStem(metric, '243', null))[0]).toMatchObject({ rule: 'dbh-range', level: 'look', cause: 'decimal-dbh', suggestion: { digits: '24.3' } });
   });
