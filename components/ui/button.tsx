@@ -10,14 +10,21 @@ const kinds = {
   halt: 'bg-halt text-halt-on border-2 border-halt font-bold active:opacity-90',
 } as const;
 
-type Props = ButtonHTMLAttributes<HTMLButtonElement> & { readonly kind?: keyof typeof kinds };
+/** Height and type go together: two utilities for one property would leave the choice to the order of the stylesheet. */
+const sizes = {
+  small: 'min-h-target text-base',
+  normal: 'min-h-target text-lg',
+  large: 'min-h-glove text-2xl',
+} as const;
+
+type Props = ButtonHTMLAttributes<HTMLButtonElement> & { readonly kind?: keyof typeof kinds; readonly size?: keyof typeof sizes };
 
 /** A button big enough for a wet thumb. */
-export function Button({ kind = 'plain', className, type = 'button', ...rest }: Props) {
+export function Button({ kind = 'plain', size = 'normal', className, type = 'button', ...rest }: Props) {
   return (
     <button
       type={type}
-      className={classNames('min-h-target min-w-target cursor-pointer rounded-lg px-4 py-2 text-lg leading-tight disabled:cursor-default disabled:opacity-60', kinds[kind], className)}
+      className={classNames('min-w-target cursor-pointer rounded-lg py-2 leading-tight disabled:cursor-default disabled:opacity-60', sizes[size], /(^| )px-/.test(className ?? '') ? '' : 'px-4', kinds[kind], className)}
       {...rest}
     />
   );

@@ -16,11 +16,14 @@ function looksByMeasurement(records: ProjectRecords): ReadonlyMap<string, readon
   return found;
 }
 
-/** Teaches one stem as it now stands; one that is deleted, or of a visit that does not teach, is forgotten. */
-function teachOne(screen: Screen, records: ProjectRecords, measurementId: string, looks: readonly SecondLook[]): void {
+/**
+ * Teaches one stem as it now stands; one that is deleted, or of a visit that does not teach, is forgotten. Visits begun before
+ * `since` are in the published curve already, at the weight that another year deserves.
+ */
+function teachOne(screen: Screen, records: ProjectRecords, measurementId: string, looks: readonly SecondLook[], since: string): void {
   const measurement = records.stemMeasurement.get(measurementId);
   const visit = measurement && records.visit.get(measurement.visitId);
-  if (!measurement || measurement.deleted || !visit || visit.deleted || visit.kind !== 'production') {
+  if (!measurement || measurement.deleted || !visit || visit.deleted || visit.kind !== 'production' || visit.startedAt < since) {
     screen.forget(measurementId);
     return;
   }
@@ -29,15 +32,15 @@ function teachOne(screen: Screen, records: ProjectRecords, measurementId: string
 }
 
 /** The stems that changes touch, to be taught anew. */
-export function teachChanged(screen: Screen, records: ProjectRecords, measurementIds: ReadonlySet<string>): void {
-  for (const id of measurementIds) teachOne(screen, records, id, [...records.secondLook.values()].filter((look) => look.measurementId === id));
+export function teachChanged(screen: Screen, records: ProjectRecords, measurementIds: ReadonlySet<string>, since: string): void {
+  for (const id of measurementIds) teachOne(screen, records, id, [...records.secondLook.values()].filter((look) => look.measurementId === id), since);
 }
 
 /**
- * The checks of a project with all that its stems on this device teach. `without` leaves out the visits of a plot:
+ * The checks of a project with all that its stems of the round begun at `since` teach. `without` leaves out the visits of a plot:
  * a blind visit uses nothing of what it checks.
  */
-export function projectScreen(records: ProjectRecords, projectId: string, without: string | null = null): Screen | null {
+export function projectScreen(records: ProjectRecords, projectId: string, since: string, without: string | null = null): Screen | null {
   const project = records.project.get(projectId);
   if (!project) return null;
   const { dbhUnit, lengthUnit, dbhDecimals, heightDecimals, breastHeightM, alarmRatePer100, tauSquared, curveForm } = project;
@@ -47,7 +50,7 @@ export function projectScreen(records: ProjectRecords, projectId: string, withou
   });
   const looks = looksByMeasurement(records);
   for (const { id, visitId } of records.stemMeasurement.values()) {
-    if (without === null || records.visit.get(visitId)?.plotId !== without) teachOne(screen, records, id, looks.get(id) ?? NO_LOOKS);
+    if (without === null || records.visit.get(visitId)?.plotId !== without) teachOne(screen, records, id, looks.get(id) ?? NO_LOOKS, since);
   }
   return screen;
 }

@@ -123,7 +123,13 @@ export function useEntry(visit: Visited, records: ProjectRecords, ports: EntryPo
   if (!state || !ports) return null;
   return {
     state, send,
-    nextTree: () => leaveFor(() => null),
+    nextTree: () => {
+      const typing = now.current?.panel.kind === 'pad' ? now.current.typing : null;
+      // What was only just typed is asked about once before the tree is left; a second tap goes on.
+      if (typing) send({ kind: 'leave', quantity: typing.quantity });
+      if (typing && (now.current?.panel.kind === 'doubt' || now.current?.panel.kind === 'origin')) return;
+      leaveFor(() => null);
+    },
     anotherStem: () => leaveFor((left) => (left.saved.tree ? anotherStemEntry(ahead.current, visit, left, v7) : left)),
     open: (measurementId) => leaveFor(() => storedEntry(ahead.current, measurementId)),
     chooseKnown: (stemId) => leaveFor(() => {

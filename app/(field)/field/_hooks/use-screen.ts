@@ -3,6 +3,7 @@ import { useCallback, useEffect, useMemo, useState } from 'react';
 import type { Screen } from '@/lib/checks/types';
 import type { RecordChange } from '@/lib/schema/record-change';
 import { projectScreen, teachChanged } from '../_data/project-screen';
+import { roundStart } from '../_data/round-start';
 import type { ProjectRecords } from '../_data/project-records';
 import type { ProjectView } from '../_data/project-view';
 
@@ -25,11 +26,11 @@ export function useScreen(view: ProjectView, blindPlotId: string | null): { read
   const screen = useMemo(() => {
     const snapshot = view.snapshot();
     // A load counts, not each record saved since: those are taught one by one.
-    return loads >= 0 && snapshot.kind === 'ready' ? projectScreen(snapshot.records, view.projectId, blindPlotId) : null;
+    return loads >= 0 && snapshot.kind === 'ready' ? projectScreen(snapshot.records, view.projectId, roundStart(), blindPlotId) : null;
   }, [view, blindPlotId, loads]);
   const learn = useCallback((changes: readonly RecordChange[]) => {
     const snapshot = view.snapshot();
-    if (screen && snapshot.kind === 'ready' && blindPlotId === null) teachChanged(screen, snapshot.records, touched(changes, snapshot.records));
+    if (screen && snapshot.kind === 'ready' && blindPlotId === null) teachChanged(screen, snapshot.records, touched(changes, snapshot.records), roundStart());
   }, [screen, view, blindPlotId]);
   return { screen, learn };
 }

@@ -69,7 +69,7 @@ export function FinishScreen({ records, view, plot, visit }: Props) {
         {clash && <Notice icon="hazard" live="alert"><p>{trees} {trees === 1 ? 'tree is' : 'trees are'} recorded. Delete {trees === 1 ? 'it' : 'them'} first, or choose another outcome.</p></Notice>}
         {wantsNote && <p>Say in the note which part was measured.</p>}
         {fault && <Notice tone="halt" icon="hazard" live="alert" title="Not saved"><p>{fault}</p></Notice>}
-        <Button kind="main" className="flex min-h-[72px] w-full items-center justify-center gap-2 text-xl" disabled={!outcome || clash || wantsNote || busy} onClick={() => void finish()}>
+        <Button size="large" kind="main" className="flex w-full items-center justify-center gap-2" disabled={!outcome || clash || wantsNote || busy} onClick={() => void finish()}>
           <Icon name="check" />{doubts > 0 ? `Finish with ${doubts} open ${doubts === 1 ? 'doubt' : 'doubts'}` : 'Finish the visit'}
         </Button>
       </main>

@@ -67,11 +67,11 @@ export function PlotScreen({ records, view, plot }: Props) {
       <div className="sticky bottom-0 mx-auto max-w-2xl border-t border-paper-line bg-paper p-3">
         {summary.open
           ? (
-            <Button kind="main" className="flex min-h-[72px] w-full items-center justify-center gap-2 text-xl" onClick={() => toVisit(summary.open!.id)}>
+            <Button size="large" kind="main" className="flex w-full items-center justify-center gap-2" onClick={() => toVisit(summary.open!.id)}>
               Continue the visit<span className="font-normal">({summary.trees} {summary.trees === 1 ? 'tree' : 'trees'})</span>
             </Button>
           )
-          : <Button kind={summary.state === 'finished' ? 'plain' : 'main'} className="min-h-[72px] w-full text-xl" onClick={() => void start()}>Start a visit</Button>}
+          : <Button size="large" kind={summary.state === 'finished' ? 'plain' : 'main'} className="w-full" onClick={() => void start()}>Start a visit</Button>}
       </div>
     </>
   );

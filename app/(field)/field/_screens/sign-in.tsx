@@ -47,7 +47,7 @@ export function SignInScreen({ store, done }: Props) {
         <TextInput label="E-mail" name="email" type="email" autoComplete="username" required value={email} onChange={(event) => setEmail(event.target.value)} />
         <TextInput label="Password" name="password" type="password" autoComplete="current-password" required value={password} onChange={(event) => setPassword(event.target.value)} />
         {fault && <Notice tone="halt" icon="hazard" live="alert"><p>{fault}</p></Notice>}
-        <Button kind="main" type="submit" className="w-full text-xl" disabled={busy}>{busy ? 'Signing in…' : 'Sign in'}</Button>
+        <Button kind="main" type="submit" className="w-full" disabled={busy}>{busy ? 'Signing in…' : 'Sign in'}</Button>
       </form>
       <p className="text-ink-soft">Signing in needs a network, once. After that the field book opens on this phone without one, for days.</p>
     </main>

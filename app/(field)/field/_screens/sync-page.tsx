@@ -38,7 +38,7 @@ export function SyncScreen({ projectId, name }: { readonly projectId: string; re
           <dt>Last sync</dt><dd className="text-right">{queue?.lastSyncAt ? dayWords(queue.lastSyncAt) : 'never'}</dd>
           <dt>Set aside by the server</dt><dd className="digits text-right text-2xl font-bold">{queue?.quarantined.length ?? '…'}</dd>
         </dl>
-        <Button kind="main" className="flex w-full items-center justify-center gap-2 text-xl" disabled={status === null || busy} onClick={() => void run()}>
+        <Button kind="main" className="flex w-full items-center justify-center gap-2" disabled={status === null || busy} onClick={() => void run()}>
           <Icon name="sync" />{busy ? 'Syncing…' : 'Sync now'}
         </Button>
         <div aria-live="polite">

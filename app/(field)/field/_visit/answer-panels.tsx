@@ -12,8 +12,8 @@ export function OriginPanel({ first, second, choose }: { readonly first: string;
       <p role="alert" className="text-lg leading-tight">
         First <b className="digits">{first}</b>, now <b className="digits">{second}</b>. How did it come?
       </p>
-      <Button kind="main" className="min-h-[76px] w-full text-xl" onClick={() => choose('again')}>Measured again at the tree</Button>
-      <Button className="min-h-[76px] w-full text-xl" onClick={() => choose('retyped')}>Misheard or mistyped</Button>
+      <Button size="large" kind="main" className="w-full" onClick={() => choose('again')}>Measured again at the tree</Button>
+      <Button size="large" className="w-full" onClick={() => choose('retyped')}>Misheard or mistyped</Button>
     </section>
   );
 }

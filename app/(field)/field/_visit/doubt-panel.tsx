@@ -42,7 +42,7 @@ export function DoubtPanel(props: DoubtPanelProps) {
           </div>
         )}
         {expected !== null && shown && <p className="digits px-1">{expected}</p>}
-        <Button kind="doubt" className="flex min-h-[72px] w-full items-center justify-center gap-2 text-2xl" onClick={() => props.readAgain(readFirst)}>
+        <Button size="large" kind="doubt" className="flex w-full items-center justify-center gap-2" onClick={() => props.readAgain(readFirst)}>
           <Icon name="again" className="size-7" />Read again <span className="text-lg font-normal">{quantityWords[readFirst]}</span>
         </Button>
         {suggestion && (
@@ -51,13 +51,13 @@ export function DoubtPanel(props: DoubtPanelProps) {
           </Button>
         )}
         <div className="grid grid-cols-[1.7fr_1fr_1fr] gap-1.5">
-          <Button className="px-1 text-base" onClick={props.keep}>Keep, with a reason</Button>
-          <Button className="px-1 text-base" onClick={props.later}>Later</Button>
-          <Button className="px-1 text-base" onClick={props.nextTree}>Next tree</Button>
+          <Button size="small" className="px-1" onClick={props.keep}>Keep, with a reason</Button>
+          <Button size="small" className="px-1" onClick={props.later}>Later</Button>
+          <Button size="small" className="px-1" onClick={props.nextTree}>Next tree</Button>
         </div>
         <div className="flex gap-1.5">
-          {readOther && <Button kind="quiet" className="flex-1 px-1 text-base" onClick={() => props.readAgain(readOther)}>Read the {readOther === 'dbh' ? 'DBH' : 'height'} instead</Button>}
-          {expected !== null && !shown && <Button kind="quiet" className="flex-1 px-1 text-base" onClick={() => setShown(true)}>Show what was expected</Button>}
+          {readOther && <Button size="small" kind="quiet" className="flex-1 px-1" onClick={() => props.readAgain(readOther)}>Read the {readOther === 'dbh' ? 'DBH' : 'height'} instead</Button>}
+          {expected !== null && !shown && <Button size="small" kind="quiet" className="flex-1 px-1" onClick={() => setShown(true)}>Show what was expected</Button>}
         </div>
       </div>
     </section>

@@ -61,10 +61,10 @@ export function EntryCard(props: EntryCardProps) {
           <span className="digits block text-3xl leading-none font-bold text-bronze">{label}</span>
           <span className="sr-only">, choose another</span>
         </button>
-        <Button className="min-w-0 flex-1 px-2 text-base" onClick={() => send({ kind: 'show', panel: { kind: panel.kind === 'form' ? 'pad' : 'form' } })}>
+        <Button size="small" className="min-w-0 flex-1 px-2" onClick={() => send({ kind: 'show', panel: { kind: panel.kind === 'form' ? 'pad' : 'form' } })}>
           <span className="sr-only">Status and form: </span>{statusWords[measurement.status]}, {formWords[measurement.form].toLowerCase()}
         </Button>
-        <Button className="min-w-0 flex-1 px-2 text-base" disabled={!state.saved.tree} onClick={entry.anotherStem}>Another stem</Button>
+        <Button size="small" className="min-w-0 flex-1 px-2" disabled={!state.saved.tree} onClick={entry.anotherStem}>Another stem</Button>
       </div>
       {/* A question takes the room of the species on a phone; the values stay in sight. */}
       <div className={panel.kind === 'pad' ? '' : 'max-[899px]:hidden'}>
