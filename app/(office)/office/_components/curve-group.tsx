@@ -25,7 +25,7 @@ export function CurveGroup({ base, group, project, changed }: Props) {
   const [busy, setBusy] = useState(false);
   const [wrong, setWrong] = useState<string | null>(null);
   const fit = group.fits[form];
-  const name = group.curveGroup === '*' ? 'All groups pooled' : group.curveGroup;
+  const name = group.curveGroup === '*' ? 'all groups' : group.curveGroup;
   const own = ({ dCm, hM }: { dCm: number; hM: number }) => ({ x: fromCanonicalCm(dCm, project.dbhUnit), y: fromCanonicalM(hM, project.lengthUnit) });
   const publish = async () => {
     setBusy(true);

@@ -74,7 +74,7 @@ export function Overview({ projectId }: { readonly projectId: string }) {
           <section aria-labelledby="people">
             <h2 id="people" className="pb-2 text-xl font-bold">People</h2>
             <DataTable
-              caption="People" rows={people} rowKey={({ id }) => id} empty="Nobody yet."
+              caption="People and roles" rows={people} rowKey={({ id }) => id} empty="Nobody yet."
               columns={[{ key: 'name', head: 'Name', cell: ({ name }) => name }, { key: 'role', head: 'Role', cell: ({ role }) => roleWords[role as Role] }]}
             />
           </section>

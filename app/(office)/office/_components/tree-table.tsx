@@ -9,6 +9,7 @@ import { useApi } from '../_hooks/use-api';
 import { DoubtCell } from './doubt-cell';
 import { Loaded } from './loaded';
 import { TreeFilters } from './tree-filters';
+import { stemName } from './stem-name';
 import { when } from './when';
 
 type Row = Readonly<Record<string, string | number | null>>;
@@ -57,7 +58,7 @@ export function TreeTable({ projectId }: { readonly projectId: string }) {
                 { key: 'plot', head: 'Plot', cell: (row) => row.plot },
                 { key: 'visit', head: 'Visit', cell: (row) => <Link className={linkLook} href={`/office/p/${projectId}/visits/${row.visit_id}`}>{when(String(row.visit_started)).split(',')[0]}</Link> },
                 { key: 'kind', head: 'Kind', cell: (row) => visitKindWords[row.visit_kind as Visit['kind']] },
-                { key: 'tag', head: 'Tree', numeric: true, cell: (row) => (row.stem === '1' ? row.tag : `${row.tag}·${row.stem}`) },
+                { key: 'tag', head: 'Tree', numeric: true, cell: (row) => stemName(String(row.tag), String(row.stem)) },
                 { key: 'species', head: 'Species', cell: (row) => row.species ?? '' },
                 { key: 'form', head: 'Stem', cell: (row) => `${statusWords[row.status as StemMeasurement['status']]}, ${formWords[row.form as StemMeasurement['form']].toLowerCase()}` },
                 { key: 'dbh', head: 'DBH', numeric: true, cell: (row) => (row.dbh_digits === null ? '' : `${row.dbh_digits} ${row.dbh_unit}`) },

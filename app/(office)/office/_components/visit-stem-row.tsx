@@ -6,6 +6,7 @@ import { answerWords, causeWords, formWords, reasonWords, ruleWords, statusWords
 import type { VisitStem } from '@/lib/server/projects/read-visit';
 import { formatValue } from '@/lib/trees/format-value';
 import { fromCanonicalCm, fromCanonicalM } from '@/lib/trees/units';
+import { stemName } from './stem-name';
 import { when } from './when';
 
 const originWords: Readonly<Record<Reading['origin'], string>> = { first: 'first reading', again: 'measured again', retyped: 'read again, mended', converted: 'suggested value taken' };
@@ -44,7 +45,7 @@ export function VisitStemRow({ stem: { tag, stem, species, measurement, readings
       <span className={`w-2 shrink-0 ${open ? 'doubt-edge' : ''}`} aria-hidden="true" />
       <div className="grid flex-1 gap-x-6 gap-y-1 px-3 py-2 text-sm md:grid-cols-[14rem_1fr_1.4fr]">
         <div>
-          <p className="text-base"><b>Tree {tag}{stem === '1' ? '' : `, stem ${stem}`}</b> {species ?? 'no species'}</p>
+          <p className="text-base"><b>Tree {stemName(tag, stem)}</b> {species ?? 'no species'}</p>
           <p className="digits text-base">{measurement.dbhDigits === null ? 'no DBH' : `${measurement.dbhDigits} ${measurement.dbhUnit}`} · {measurement.heightDigits === null ? 'no height' : `${measurement.heightDigits} ${measurement.heightUnit}`}</p>
           <p className="text-ink-soft">{statusWords[measurement.status]}, {formWords[measurement.form].toLowerCase()}{measurement.remarks && `. ${measurement.remarks}`}</p>
         </div>
