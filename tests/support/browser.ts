@@ -73,7 +73,7 @@ export type Profile = {
   readonly process: ChildProcess;
   readonly browser: Browser;
   readonly context: BrowserContext;
-  /** The first page, sized as the viewport. */
+  /** A page of our own, sized as the viewport. */
   readonly page: Page;
 };
 
@@ -105,7 +105,8 @@ export async function launchProfile(dir: string, { viewport = PHONE, args = [] }
   const browser = await chromium.connectOverCDP(await debuggingAddress(dir, child));
   const [context] = browser.contexts();
   if (!context) throw new Error('Chromium has no profile context');
-  const page = context.pages()[0] ?? await context.newPage();
+  // Not the page that the browser opened for itself: at its start that one may still be taken away.
+  const page = await context.newPage();
   await page.setViewportSize({ ...viewport });
   return { dir, process: child, browser, context, page };
 }
