@@ -50,6 +50,7 @@ export const authorisationMatrix: Readonly<Record<string, Partial<Readonly<Recor
   'v1/projects/[projectId]/second-looks.csv/route.ts': { GET: { access: 'data.read' } },
   'v1/projects/[projectId]/dictionary/route.ts': { GET: { access: 'data.read' } },
   'v1/projects/[projectId]/dictionary.csv/route.ts': { GET: { access: 'data.read' } },
+  'v1/projects/[projectId]/changes/route.ts': { GET: { access: 'data.read' } },
   'v1/projects/[projectId]/quarantine/route.ts': { GET: { access: 'data.read' } },
   'v1/projects/[projectId]/curves/route.ts': {
     GET: { access: 'data.read' },

@@ -2,7 +2,7 @@
 import Link from 'next/link';
 import { usePathname } from 'next/navigation';
 
-const pages = [['', 'Overview'], ['/visits', 'Visits'], ['/trees', 'Trees and doubts'], ['/curves', 'Height curves']] as const;
+const pages = [['', 'Overview'], ['/visits', 'Visits'], ['/trees', 'Trees and doubts'], ['/curves', 'Height curves'], ['/changes', 'Change log']] as const;
 
 /** The pages of one project; its units stand beside its name on each of them. */
 export function ProjectNav({ projectId, name, units }: { readonly projectId: string; readonly name: string; readonly units: string }) {
