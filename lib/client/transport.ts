@@ -12,7 +12,9 @@ function failureOf(status: number): Failure {
   if (status === 401) return 'sign-in';
   if (status === 403 || status === 404) return 'denied';
   if (status === 413) return 'too-big';
-  return status >= 500 || status === 429 ? 'server' : status >= 300 && status < 400 ? 'not-ours' : 'refused';
+  // Too often: a smaller batch would only knock again. Waiting is what was asked for.
+  if (status === 429) return 'refused';
+  return status >= 500 ? 'server' : status >= 300 && status < 400 ? 'not-ours' : 'refused';
 }
 
 /** The JSON of an answer; undefined when it is something else. */

@@ -45,6 +45,20 @@ describe('push (rule 3)', () => {
     expect((await POST(request, routeContext())).status).toBe(200);
   });
 
+  it('a device that knocks more than 120 times a minute is told when to come again, and what it sent before stays', async () => {
+    const { phone } = phoneWithTree();
+    const statuses: number[] = [];
+    let late: Response | null = null;
+    for (let i = 0; i < 121; i++) {
+      late = await post(there.crew, phone.request());
+      statuses.push(late.status);
+    }
+    expect(statuses.slice(0, 120)).toEqual(Array(120).fill(200));
+    expect(late!.status).toBe(429);
+    expect(Number(late!.headers.get('retry-after'))).toBeGreaterThan(0);
+    expect(await server.models.ChangeLogEntry.count({ where: { deviceId: phone.deviceId } })).toBe(5);
+  });
+
   it('answers what was sent before as it was answered then, and stores it once (invariant 5)', async () => {
     const { phone, measurementId } = phoneWithTree();
     const first = await push(there.crew, phone.request());

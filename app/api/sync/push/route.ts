@@ -3,6 +3,8 @@ import { idSchema } from '@/lib/schema/common';
 import { PAGE, hashSchema, pushReplySchema, pushRequestSchema } from '@/lib/schema/wire';
 import { Problem } from '@/lib/server/errors';
 import { pushOperations } from '@/lib/server/log/append';
+import { syncPerDevice } from '@/lib/server/rate-limit';
+import { enforceLimit } from '@/lib/server/rate-limit-guard';
 import { route } from '@/lib/server/route';
 
 export const dynamic = 'force-dynamic';
@@ -14,6 +16,7 @@ const bodySchema = z.looseObject({ ...pushRequestSchema.shape, ops: z.array(arri
 export const POST = route(
   { access: 'signed-in', body: bodySchema, maxBodyBytes: 8 * 1024 * 1024, verbatim: true, reply: pushReplySchema },
   async ({ body, user }) => {
+    enforceLimit(`sync:${body.deviceId}`, syncPerDevice);
     const outcome = await pushOperations(body, user);
     if (!('problem' in outcome)) return outcome;
     const { code, ...members } = outcome.problem;
