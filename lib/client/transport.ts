@@ -13,7 +13,7 @@ function failureOf(status: number): Failure {
   if (status === 403 || status === 404) return 'denied';
   if (status === 413) return 'too-big';
   // Too often: a smaller batch would only knock again. Waiting is what was asked for.
-  if (status === 429) return 'refused';
+  if (status === 429) return 'busy';
   return status >= 500 ? 'server' : status >= 300 && status < 400 ? 'not-ours' : 'refused';
 }
 

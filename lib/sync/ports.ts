@@ -2,10 +2,10 @@ import type { PullReply, PushProblem, PushReply, PushRequest, WorkPack } from '@
 
 /**
  * Why there is no answer from the server. `offline`: no answer at all. `not-ours`: something answered that is not the
- * server (a network's log-in page). `too-big`: 413. `server`: 5xx or too many requests. `sign-in`: 401.
+ * server (a network's log-in page). `too-big`: 413. `server`: 5xx. `busy`: 429, wait. `sign-in`: 401.
  * `denied`: 403 or 404, no access to what was asked for. `refused`: anything else.
  */
-export type Failure = 'offline' | 'not-ours' | 'too-big' | 'server' | 'sign-in' | 'denied' | 'refused';
+export type Failure = 'offline' | 'not-ours' | 'too-big' | 'server' | 'busy' | 'sign-in' | 'denied' | 'refused';
 export type Answer<T> = { readonly kind: 'ok'; readonly reply: T } | { readonly kind: Failure };
 export type PushAnswer = Answer<PushReply> | { readonly kind: 'problem'; readonly problem: PushProblem };
 

@@ -49,7 +49,7 @@ describe('what an answer counts as', () => {
     [new Response(null, { status: 401 }), 'sign-in'],
     [new Response(null, { status: 404 }), 'denied'],
     [new Response(null, { status: 413 }), 'too-big'],
-    [new Response(null, { status: 429 }), 'refused'],
+    [new Response(null, { status: 429 }), 'busy'],
     [new Response(null, { status: 507 }), 'server'],
     [new Response(null, { status: 422 }), 'refused'],
     [health(), 'ok'],

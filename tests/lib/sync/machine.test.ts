@@ -7,7 +7,7 @@ import type { Failure } from '@/lib/sync/ports';
 const events: readonly SessionEvent[] = [
   { kind: 'wanted' }, { kind: 'lock-taken' }, { kind: 'lock-busy' }, { kind: 'reached' }, { kind: 'pushed', more: true }, { kind: 'pushed', more: false },
   { kind: 'forked' }, { kind: 'rewound' }, { kind: 'pulled', more: true }, { kind: 'pulled', more: false }, { kind: 'diverged' }, { kind: 'due' }, { kind: 'signed-in' },
-  ...(['offline', 'not-ours', 'too-big', 'server', 'sign-in', 'denied', 'refused'] as const).map((failure): SessionEvent => ({ kind: 'failed', failure })),
+  ...(['offline', 'not-ours', 'too-big', 'server', 'busy', 'sign-in', 'denied', 'refused'] as const).map((failure): SessionEvent => ({ kind: 'failed', failure })),
 ];
 const fail = (failure: Failure): SessionEvent => ({ kind: 'failed', failure });
 const at = (phase: Phase, more: Partial<SessionState> = {}): SessionState => ({ ...initialSession, phase, ...more });

@@ -13,6 +13,8 @@ export function problemWords(problem: SyncStatus['problem']): string | null {
       return 'The server takes less at a time; it is tried again in smaller pieces.';
     case 'server':
       return 'The server has a fault of its own; it is tried again by itself.';
+    case 'busy':
+      return 'The server asks this phone to wait a little; it is tried again by itself.';
     case 'sign-in':
       return 'The server wants you to sign in again. Recording goes on without it.';
     case 'denied':
