@@ -10,6 +10,7 @@ import { ensureBuilt } from './demo/ensure-built';
 import { lanAddresses } from './demo/lan-addresses';
 import { portIsFree } from './demo/port-is-free';
 import { StartError, startServer } from './start';
+import { stopOnSignals } from './stop-on-signals';
 
 /** Readies the environment of a production server, with a secret of the demo's own where none is set. */
 function readyEnvironment(): number {
@@ -33,18 +34,7 @@ async function main(): Promise<void> {
   const summary = await seedDemo();
   const running = await startServer();
   console.log(demoGreeting({ summary, port, lan: lanAddresses(), dataFolder: dataFolder() }));
-
-  let stopping = false;
-  for (const signal of ['SIGTERM', 'SIGINT'] as const) {
-    process.on(signal, () => {
-      if (stopping) return;
-      stopping = true;
-      running.close().then(() => process.exit(0), (error: unknown) => {
-        console.error('The server did not stop cleanly.', error);
-        process.exit(1);
-      });
-    });
-  }
+  stopOnSignals(running);
 }
 
 if (process.argv[1] && import.meta.url === pathToFileURL(process.argv[1]).href) {

@@ -8,6 +8,7 @@ import { addressHeader, clientAddress } from '@/lib/server/rate-limit-address';
 import { writesSettled } from '@/lib/server/write-queue';
 import { closeDatabase, openDatabase } from '@/models';
 import { migrate } from '@/models/migrate';
+import { stopOnSignals } from './stop-on-signals';
 
 const root = path.resolve(path.dirname(fileURLToPath(import.meta.url)), '../..');
 
@@ -90,17 +91,7 @@ async function main(): Promise<void> {
   try {
     const running = await startServer({ dev: process.argv.includes('--dev') });
     console.log(`Lammas is served at ${running.address}`);
-    let stopping = false;
-    for (const signal of ['SIGTERM', 'SIGINT'] as const) {
-      process.on(signal, () => {
-        if (stopping) return;
-        stopping = true;
-        running.close().then(() => process.exit(0), (error: unknown) => {
-          console.error('The server did not stop cleanly.', error);
-          process.exit(1);
-        });
-      });
-    }
+    stopOnSignals(running);
   } catch (error) {
     const expected = error instanceof StartError || error instanceof EnvironmentError;
     console.error(expected ? error.message : error);
