@@ -7,6 +7,7 @@ import { toCanonicalCm, toCanonicalM } from '@/lib/trees/units';
 import { openDatabase } from '@/models';
 import type { Models } from '@/models';
 import type { ReferenceTreeRow } from '@/models/reference-tree';
+import { upsertRows } from '../upsert-rows';
 import { write } from '../write-queue';
 import { readTable } from './read-table';
 import type { TableIssue, TableRow } from './read-table';
@@ -29,7 +30,8 @@ export type ReferenceImportResult =
   | { readonly ok: false; readonly issues: readonly TableIssue[] };
 
 const MOST_ISSUES = 1000;
-const BATCH = 500;
+/** What a conversion may cost: 4.5 ft is breast height, not a hair above it. */
+const ROUNDING_M = 1e-9;
 const same = (a: string, b: string): boolean => a.trim().toLowerCase() === b.trim().toLowerCase();
 
 type Facts = { readonly breastHeightM: number; readonly species: (name: string) => string | null; readonly speciesNames: string };
@@ -49,7 +51,7 @@ function readRow({ line, cells }: TableRow, given: ReferenceImport, facts: Facts
   const dbh = number(columns.dbh, dbhUnit);
   const height = number(columns.height, lengthUnit);
   const heightM = height && toCanonicalM(height.value, lengthUnit);
-  if (heightM !== null && heightM <= facts.breastHeightM) problem(columns.height, `${height?.digits} ${lengthUnit} is not above breast height.`);
+  if (heightM !== null && heightM <= facts.breastHeightM + ROUNDING_M) problem(columns.height, `${height?.digits} ${lengthUnit} is not above breast height.`);
   const named = columns.species === undefined ? given.defaultSpecies ?? '' : cells[columns.species] ?? '';
   const speciesId = facts.species(named);
   if (speciesId === null) problem(columns.species ?? 'species', `the project has no species "${named.slice(0, 60)}". It has: ${facts.speciesNames}.`);
@@ -107,9 +109,7 @@ export async function importReferenceTrees(given: ReferenceImport): Promise<Refe
       id: batchId, projectId: given.projectId, fileName: given.fileName.slice(0, 200), sha256: createHash('sha256').update(given.bytes).digest('hex'),
       rows: trees.length, dbhUnit, lengthUnit, importedById: given.authorId, importedAt: new Date().toISOString(), note: given.note ?? '',
     }, { transaction });
-    for (let start = 0; start < trees.length; start += BATCH) {
-      await stored.ReferenceTree.bulkCreate(trees.slice(start, start + BATCH).map((tree) => ({ ...tree, id: v7(), batchId })), { transaction });
-    }
+    await upsertRows(stored.ReferenceTree, trees.map((tree) => ({ ...tree, id: v7(), batchId })), transaction);
   });
   return { ok: true, batchId, rows: trees.length, speciesIds: [...new Set(trees.map(({ speciesId }) => speciesId))] };
 }

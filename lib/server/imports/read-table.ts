@@ -14,6 +14,13 @@ export type ReadTable =
 const no = (message: string, row: number | null = null): ReadTable => ({ ok: false, issues: [{ row, column: null, message }] });
 const lineBreaks = (text: string): number => text.split('\n').length - 1;
 
+/** The sign that divides the header line, outside quotes; where none does, the file has one column. */
+function delimiterOf(text: string): string {
+  const header = (/^(?:"(?:[^"]|"")*"|[^"\r\n])*/.exec(text.trimStart())?.[0] ?? '').replace(/"(?:[^"]|"")*"/g, '');
+  const counts = [',', ';', '\t'].map((sign) => [sign, header.split(sign).length - 1] as const);
+  return counts.reduce((best, one) => (one[1] > best[1] ? one : best))[0];
+}
+
 /**
  * Reads a delimited text file (comma, semicolon or tab; RFC 4180 quotes; UTF-8 with or without a byte order mark).
  *
@@ -30,7 +37,7 @@ export function readTable(bytes: Uint8Array): ReadTable {
     return no('The file is not UTF-8 text. Save it as "CSV UTF-8" and try again.');
   }
   if (text.trim() === '') return no('The file is empty. It needs a header line and a line for each tree.');
-  const parsed = Papa.parse<string[]>(text, { delimitersToGuess: [',', ';', '\t'], skipEmptyLines: false });
+  const parsed = Papa.parse<string[]>(text, { delimiter: delimiterOf(text), skipEmptyLines: false });
   const quote = parsed.errors.find(({ type }) => type === 'Quotes');
   if (quote) {
     const line = 1 + parsed.data.slice(0, quote.row ?? 0).reduce((sum, row) => sum + 1 + row.reduce((inner, cell) => inner + lineBreaks(cell), 0), 0);
@@ -47,5 +54,5 @@ export function readTable(bytes: Uint8Array): ReadTable {
     if (cells.some((cell) => cell.trim() !== '')) rows.push({ line, cells: Object.fromEntries(names.map((name, i) => [name, (cells[i] ?? '').trim()])) });
     line += 1 + cells.reduce((sum, cell) => sum + lineBreaks(cell), 0);
   }
-  return rows.length === 0 ? no('The file has a header but no rows.') : { ok: true, header: names, delimiter: parsed.meta.delimiter, rows };
+  return rows.length === 0 ? no('The file has a header but no rows.') : { ok: true, header: names, delimiter: delimiterOf(text), rows };
 }

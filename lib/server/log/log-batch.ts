@@ -12,7 +12,7 @@ import type { ChangeLogEntryRow } from '@/models/change-log-entry';
 import type { DeviceRow } from '@/models/device';
 import type { RecordGroupRow } from '@/models/record-group';
 import type { WriteContext } from '../write-queue';
-import { upsertRows } from './upsert-rows';
+import { upsertRows } from '../upsert-rows';
 
 /** Rows to one INSERT, ids to one question. */
 const BULK = 500;

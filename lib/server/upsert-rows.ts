@@ -1,6 +1,5 @@
 import 'server-only';
-import type { Transaction } from 'sequelize';
-import type { AnyRow, AnySyncedModel } from '@/models';
+import type { Model, ModelStatic, Transaction } from 'sequelize';
 
 /** SQLite looks a named parameter up one by one, so that few statements with very many cost more than many with few. */
 const MOST_PARAMETERS = 600;
@@ -9,7 +8,7 @@ const MOST_PARAMETERS = 600;
  * Inserts records or replaces all their fields. Values are bound, not written into the SQL text: SQLite reads about one
  * decimal number in 2,500 back with another last bit, and a value must come out as the device sent it.
  */
-export async function upsertRows(model: AnySyncedModel, rows: readonly AnyRow[], transaction: Transaction): Promise<void> {
+export async function upsertRows(model: Pick<ModelStatic<Model>, 'getAttributes' | 'tableName' | 'sequelize'>, rows: readonly Readonly<Record<string, unknown>>[], transaction: Transaction): Promise<void> {
   const columns = Object.entries(model.getAttributes()).map(([name, { field, type }]) => ({ name, column: `"${field ?? name}"`, json: String(type) === 'JSON' }));
   const perStatement = Math.max(1, Math.floor(MOST_PARAMETERS / columns.length));
   const updates = columns.filter(({ name }) => name !== 'id').map(({ column }) => `${column} = excluded.${column}`).join(', ');
