@@ -1,14 +1,21 @@
 import 'server-only';
-import type { Model, ModelStatic, Transaction } from 'sequelize';
+import type { Sequelize, Transaction } from 'sequelize';
 
 /** SQLite looks a named parameter up one by one, so that few statements with very many cost more than many with few. */
 const MOST_PARAMETERS = 600;
+
+/** What is needed of a model; Sequelize's own type asks for the whole class. */
+type Stored = {
+  readonly tableName: string;
+  readonly sequelize?: Sequelize;
+  getAttributes(): Readonly<Record<string, { readonly field?: string; readonly type: unknown }>>;
+};
 
 /**
  * Inserts records or replaces all their fields. Values are bound, not written into the SQL text: SQLite reads about one
  * decimal number in 2,500 back with another last bit, and a value must come out as the device sent it.
  */
-export async function upsertRows(model: Pick<ModelStatic<Model>, 'getAttributes' | 'tableName' | 'sequelize'>, rows: readonly Readonly<Record<string, unknown>>[], transaction: Transaction): Promise<void> {
+export async function upsertRows(model: Stored, rows: readonly Readonly<Record<string, unknown>>[], transaction: Transaction): Promise<void> {
   const columns = Object.entries(model.getAttributes()).map(([name, { field, type }]) => ({ name, column: `"${field ?? name}"`, json: String(type) === 'JSON' }));
   const perStatement = Math.max(1, Math.floor(MOST_PARAMETERS / columns.length));
   const updates = columns.filter(({ name }) => name !== 'id').map(({ column }) => `${column} = excluded.${column}`).join(', ');
