@@ -24,6 +24,7 @@ const digits = localFont({
 export const metadata: Metadata = {
   title: { default: 'Lammas', template: '%s · Lammas' },
   description: 'A second look at every tree measurement, while the crew still stands at the tree.',
+  icons: { icon: '/icons/lammas.svg', apple: '/icons/lammas-192.png' },
 };
 
 export const viewport: Viewport = { width: 'device-width', initialScale: 1, themeColor: '#f8f4e8' };

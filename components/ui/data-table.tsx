@@ -6,6 +6,8 @@ export type TableColumn<R> = {
   readonly head: ReactNode;
   /** Numbers stand right, in digits of one width. */
   readonly numeric?: boolean;
+  /** Dates and codes stay on one line; the table scrolls instead. */
+  readonly oneLine?: boolean;
   readonly cell: (row: R) => ReactNode;
 };
 
@@ -38,8 +40,8 @@ export function DataTable<R>({ caption, columns, rows, rowKey, doubted, empty }:
           {rows.map((row) => (
             <tr key={rowKey(row)} className="border-t border-paper-line hover:bg-paper-raised">
               {doubted && <td className={classNames('w-2 p-0', doubted(row) ? 'doubt-edge' : '')} />}
-              {columns.map(({ key, cell, numeric }) => (
-                <td key={key} className={classNames('px-2 py-1 align-top', numeric ? 'digits text-right whitespace-nowrap' : '')}>{cell(row)}</td>
+              {columns.map(({ key, cell, numeric, oneLine }) => (
+                <td key={key} className={classNames('px-2 py-1 align-top', numeric ? 'digits text-right whitespace-nowrap' : oneLine ? 'whitespace-nowrap' : '')}>{cell(row)}</td>
               ))}
             </tr>
           ))}

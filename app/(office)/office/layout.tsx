@@ -5,7 +5,7 @@ import { redirect } from 'next/navigation';
 import type { ReactNode } from 'react';
 import { getUser } from '@/lib/server/auth';
 import { SignOutButton } from './_components/sign-out-button';
-import { ThemeSwitch } from './_components/theme-switch';
+import { ThemeSwitch } from '@/components/ui/theme-switch';
 
 export const metadata: Metadata = { title: 'Office' };
 // Rendered for each request: its scripts carry the nonce of the page's policy.

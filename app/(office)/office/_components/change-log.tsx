@@ -51,8 +51,8 @@ export function ChangeLog({ projectId }: { readonly projectId: string }) {
               caption="Changes" rows={changes} rowKey={({ cursor }) => String(cursor)} doubted={({ state }) => state === 'conflict' || state === 'quarantined'} empty="Nothing has been changed here."
               columns={[
                 { key: 'cursor', head: 'No.', numeric: true, cell: ({ cursor }) => cursor },
-                { key: 'when', head: 'When, clock of the device', cell: ({ wallClock }) => when(wallClock) },
-                { key: 'who', head: 'Who', cell: ({ author }) => author },
+                { key: 'when', head: 'When, clock of the device', oneLine: true, cell: ({ wallClock }) => when(wallClock) },
+                { key: 'who', head: 'Who', oneLine: true, cell: ({ author }) => author },
                 { key: 'where', head: 'Where', cell: ({ byServer, deviceId }) => (byServer ? 'office' : <span title={deviceId}>device <span className="digits">…{deviceId.slice(-6)}</span></span>) },
                 { key: 'what', head: 'What', cell: ({ entity, kind, recordId }) => <Link className={linkLook} href={`${here}?record=${recordId}`}>{entityWords[entity] ?? entity} {kindWords[kind] ?? kind}</Link> },
                 { key: 'fields', head: 'Old and new', cell: (change) => <Fields change={change} /> },

@@ -18,7 +18,7 @@ export function ProjectList() {
             { key: 'name', head: 'Project', cell: ({ id, name, role }) => (role === 'crew' ? name : <Link href={`/office/p/${id}`} className="font-bold underline decoration-bronze underline-offset-4">{name}</Link>) },
             { key: 'role', head: 'You are', cell: ({ role }) => roleWords[role] },
             { key: 'state', head: 'State', cell: ({ state }) => state },
-            { key: 'units', head: 'Units', cell: ({ dbhUnit, lengthUnit, areaUnit }) => <span className="digits">{dbhUnit} · {lengthUnit} · {areaUnit}</span> },
+            { key: 'units', head: 'Units', oneLine: true, cell: ({ dbhUnit, lengthUnit, areaUnit }) => <span className="digits">{dbhUnit} · {lengthUnit} · {areaUnit}</span> },
           ]}
         />
       )}

@@ -56,11 +56,11 @@ export function TreeTable({ projectId }: { readonly projectId: string }) {
               empty="No tree fits these filters. Take one away, or wait for the next camp sync."
               columns={[
                 { key: 'plot', head: 'Plot', cell: (row) => row.plot },
-                { key: 'visit', head: 'Visit', cell: (row) => <Link className={linkLook} href={`/office/p/${projectId}/visits/${row.visit_id}`}>{when(String(row.visit_started)).split(',')[0]}</Link> },
+                { key: 'visit', head: 'Visit', oneLine: true, cell: (row) => <Link className={linkLook} href={`/office/p/${projectId}/visits/${row.visit_id}`}>{when(String(row.visit_started)).split(',')[0]}</Link> },
                 { key: 'kind', head: 'Kind', cell: (row) => visitKindWords[row.visit_kind as Visit['kind']] },
                 { key: 'tag', head: 'Tree', numeric: true, cell: (row) => stemName(String(row.tag), String(row.stem)) },
-                { key: 'species', head: 'Species', cell: (row) => row.species ?? '' },
-                { key: 'form', head: 'Stem', cell: (row) => `${statusWords[row.status as StemMeasurement['status']]}, ${formWords[row.form as StemMeasurement['form']].toLowerCase()}` },
+                { key: 'species', head: 'Species', oneLine: true, cell: (row) => row.species ?? '' },
+                { key: 'form', head: 'Stem', oneLine: true, cell: (row) => `${statusWords[row.status as StemMeasurement['status']]}, ${formWords[row.form as StemMeasurement['form']].toLowerCase()}` },
                 { key: 'dbh', head: 'DBH', numeric: true, cell: (row) => (row.dbh_digits === null ? '' : `${row.dbh_digits} ${row.dbh_unit}`) },
                 { key: 'height', head: 'Height', numeric: true, cell: (row) => (row.height_digits === null ? '' : `${row.height_digits} ${row.height_unit}`) },
                 { key: 'readings', head: 'Readings', numeric: true, cell: (row) => row.readings },

@@ -21,10 +21,10 @@ export function VisitList({ projectId }: { readonly projectId: string }) {
             caption="Visits" rows={rows} rowKey={({ id }) => id} doubted={({ openLooks }) => openLooks > 0} empty="No visit has arrived yet. Crews bring theirs by camp sync."
             columns={[
               { key: 'plot', head: 'Plot', cell: ({ id, plot }) => <Link className="font-bold underline decoration-bronze underline-offset-4" href={`/office/p/${projectId}/visits/${id}`}>{plot}</Link> },
-              { key: 'stratum', head: 'Stratum', cell: ({ stratum }) => stratum },
+              { key: 'stratum', head: 'Stratum', oneLine: true, cell: ({ stratum }) => stratum },
               { key: 'kind', head: 'Kind', cell: ({ kind }) => visitKindWords[kind as Visit['kind']] },
-              { key: 'started', head: 'Begun', cell: ({ startedAt }) => when(startedAt) },
-              { key: 'state', head: 'State', cell: ({ state }) => visitStateWords[state as Visit['state']] },
+              { key: 'started', head: 'Begun', oneLine: true, cell: ({ startedAt }) => when(startedAt) },
+              { key: 'state', head: 'State', oneLine: true, cell: ({ state }) => visitStateWords[state as Visit['state']] },
               { key: 'outcome', head: 'Outcome', cell: ({ outcome, outcomeNote }) => <>{outcome === null ? '' : outcomeWords[outcome as VisitOutcome]}{outcomeNote && <span className="text-ink-soft">: {outcomeNote}</span>}</> },
               { key: 'people', head: 'Measured · recorded', cell: ({ measurer, recorder }) => [measurer, recorder].map((name) => name ?? '–').join(' · ') },
               { key: 'stems', head: 'Stems', numeric: true, cell: ({ stems }) => stems },
