@@ -17,6 +17,7 @@ import { useVisitSaver } from '../_hooks/use-visit-saver';
 import { useWide } from '../_hooks/use-wide';
 import { useField } from '../_shell/field-context';
 import { EntryCard } from '../_visit/entry-card';
+import { lastEntered } from '../_visit/last-entered';
 import { ReadBack } from '../_visit/read-back';
 import { summariseStem } from '../_visit/stem-summary';
 import { TreeList } from '../_visit/tree-list';
@@ -73,7 +74,7 @@ export function VisitScreen({ records, view, plot, visit }: Props) {
         {visit.state !== 'open' && visit.state !== 'sentBack' && <p className="p-4 text-lg">This visit is finished. Open it again from the plot’s page to change it.</p>}
         {entry && project && (visit.state === 'open' || visit.state === 'sentBack') && (wide || !listed) && (
           <div className="flex flex-1 flex-col">
-            <ReadBack last={stems.at(-1) ?? null} save={save} undo={entry.undo} />
+            <ReadBack last={lastEntered(records, stems)} save={save} undo={entry.undo} />
             {save.kind === 'failed' && (
               <div className="p-2">
                 <Notice tone="halt" icon="hazard" live="alert" title="Not saved">
